@@ -200,6 +200,17 @@ export default defineConfig(
     },
   },
   {
+    // Features import ui, platform and live-run, never each other; those three import no feature.
+    files: ['src/app/{live-run,ui,platform}/**/*.ts'],
+    rules: restrict(
+      onlyTheDoor,
+      outOf(
+        ['server', 'test', 'bench', 'exercises', 'today', 'account'],
+        'ui, platform and live-run import no feature.',
+      ),
+    ),
+  },
+  {
     files: ['src/**/*.html'],
     extends: [angular.configs.templateRecommended, angular.configs.templateAccessibility],
   },
