@@ -72,6 +72,11 @@ export type Outcome =
       readonly tensionN?: number;
     };
 
+/** A state kept by `Run.save`, opaque; only for a run of the same document inside one process. */
+export interface SavedRun {
+  readonly outcome: Outcome;
+}
+
 /** One run of one scenario, live or replayed: the same class, the same path. */
 export interface Run {
   readonly tick: number;
@@ -88,4 +93,7 @@ export interface Run {
   advance(ticks: number, block?: TraceBlock): number;
   view(): RunView;
   hash(): RunHash;
+  /** Keeps everything the run is made of; `load` takes it back, also in another run of the same document. */
+  save(): SavedRun;
+  load(saved: SavedRun): void;
 }

@@ -1,0 +1,44 @@
+import {type RunHash} from './log';
+
+/** Two 32-bit numbers kept over every state of a run: a fingerprint of all its bits, no secret. */
+export class Fingerprint {
+  private readonly number = new Float64Array(1);
+  private readonly bits = new Uint32Array(this.number.buffer);
+
+  /** `state` holds the two numbers; the caller keeps, saves and loads it. */
+  constructor(private readonly state: Float64Array) {}
+
+  static readonly size = 2;
+
+  reset(): void {
+    this.state[0] = 0x6a09e667;
+    this.state[1] = 0xbb67ae85;
+  }
+
+  /** Mixes in the bits of every number. */
+  mixAll(words: Uint32Array): void {
+    let a = this.state[0]! | 0;
+    let b = this.state[1]! | 0;
+    for (const word of words) {
+      a = Math.imul(a ^ word, 0x85ebca6b);
+      a ^= a >>> 15;
+      b = Math.imul((b << 7) | (b >>> 25), 5) ^ a;
+    }
+    this.state[0] = a >>> 0;
+    this.state[1] = b >>> 0;
+  }
+
+  /** Mixes in one number. */
+  mix(value: number): void {
+    this.number[0] = value;
+    this.mixAll(this.bits);
+  }
+
+  text(): RunHash {
+    return `${hex(this.state[0]!)}${hex(this.state[1]!)}`;
+  }
+}
+
+function hex(word: number): string {
+  return word.toString(16).padStart(8, '0');
+}

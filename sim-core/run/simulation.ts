@@ -1,0 +1,356 @@
+import * as control from '../control/controller-state';
+import {Controller, type Seen} from '../control/controller';
+import * as place from '../plant/plant-state';
+import {type Grid, Plant} from '../plant/plant';
+import {cellSample} from '../plant/sensing';
+import {type Fault, ScenarioError} from '../scenario/faults';
+import {type LineCommand, type Scenario} from '../scenario/scenario';
+import {changed, type Settings, settingsOf} from '../scenario/settings';
+import {nextNormal, RANDOM_SIZE, seedWords} from '../signal/random';
+import {faultsAhead} from './act-rules';
+import {Fingerprint} from './hash';
+import {type Act, type EngineEntry, type LogEntry, type Note, type RunHash} from './log';
+import {mixChange, mixLine} from './mix-act';
+import {type Outcome, type Run, type RunEvent, type RunView, type SavedRun} from './run';
+import {type Change, type Schedule, scheduleOf} from './schedule';
+import {COLUMN, PHASES, TRACE_COLUMNS, type TraceBlock} from './trace';
+import {Watch, WATCH_SIZE} from './watch';
+
+/** Places at the front of the state, before the parts of controller and plant. */
+const PRINT = 0;
+const TICK = Fingerprint.size;
+const NEXT_LINE = TICK + 1;
+const NEXT_CHANGE = TICK + 2;
+const ENTRIES = TICK + 3; // entries stamped so far
+const SAMPLE = TICK + 4; // last sample [N]
+const RANDOM = TICK + 5;
+const WATCH = RANDOM + RANDOM_SIZE;
+const CONTROLLER = WATCH + WATCH_SIZE;
+const PLANT = CONTROLLER + control.CONTROLLER_SIZE;
+/** From here to here the state goes into the fingerprint; what lies behind are queues of what went before. */
+const PRINTED_FROM = SAMPLE;
+const PRINTED_TO = PLANT + place.PLANT_SIZE;
+
+/** What a save holds: only to be given back to the run, or a run of the same document, that made it. */
+interface Saved extends SavedRun {
+  readonly state: Float64Array;
+  readonly settings: Settings;
+  readonly pending: readonly Act[];
+  readonly events: readonly RunEvent[];
+  readonly outcome: Outcome;
+}
+
+/**
+ * One run: controller and plant joined, tick by tick. All numbers that change lie in one preallocated array,
+ * so that a save is a copy and the fingerprint covers them. What is carried from tick to tick is rebuilt from
+ * it, therefore any division of a run into calls gives the same bits.
+ */
+export class Simulation implements Run {
+  outcome: Outcome = {kind: 'running'};
+
+  private readonly grid: Grid;
+  private readonly schedule: Schedule;
+  private readonly state: Float64Array;
+  private readonly plantState: Float64Array;
+  private readonly controlState: Float64Array;
+  private readonly random: Float64Array;
+  private readonly printed: Uint32Array;
+  private readonly print: Fingerprint;
+  private readonly plant: Plant;
+  private readonly controller: Controller;
+  private readonly watch: Watch;
+  private inForce: Settings;
+  private pending: Act[] = [];
+  private readonly seen: Seen = {
+    tick: 0,
+    sampleN: 0,
+    dancerPct: 0,
+    ran: false,
+    stopped: null,
+    stands: true,
+    radiusM: 0,
+    omegaRadps: 0,
+    lineMps: 0,
+    lineSlope: 0,
+  };
+
+  /** `scenario` has been checked. */
+  constructor(private readonly scenario: Scenario) {
+    const {web, brake, controller} = scenario;
+    this.inForce = settingsOf(controller);
+    const {sampleS, standstillPct} = this.inForce;
+    const plantStepS = scenario.plantStepS ?? 0.001;
+    this.grid = {sampleS, plantStepS, stepsPerTick: Math.round(sampleS / plantStepS)};
+    this.schedule = scheduleOf(scenario, sampleS);
+
+    this.state = new Float64Array(PLANT + Plant.size(scenario, this.grid));
+    this.plantState = this.state.subarray(PLANT);
+    this.controlState = this.state.subarray(CONTROLLER, PLANT);
+    this.random = this.state.subarray(RANDOM, WATCH);
+    const printed = this.state.subarray(PRINTED_FROM, PRINTED_TO);
+    this.printed = new Uint32Array(printed.buffer, printed.byteOffset, 2 * printed.length);
+
+    this.print = new Fingerprint(this.state.subarray(PRINT, TICK));
+    this.plant = new Plant(scenario, this.plantState, this.grid);
+    this.controller = new Controller(scenario, this.controlState, this.plant.path.shape);
+    const stretchLimit = (web.stretchLimitPct ?? 1e9) / 100;
+    const watchState = this.state.subarray(WATCH, CONTROLLER);
+    this.watch = new Watch(watchState, sampleS, stretchLimit, brake.limitC ?? 150);
+
+    this.print.reset();
+    seedWords(this.random, scenario.seed);
+    this.plant.reset(standstillPct);
+    this.controller.reset(this.inForce, this.plant.path.radius());
+  }
+
+  get tick(): number {
+    return this.state[TICK]!;
+  }
+
+  get events(): readonly RunEvent[] {
+    return this.watch.events;
+  }
+
+  settings(): Readonly<Record<string, unknown>> {
+    return {...this.inForce};
+  }
+
+  act(act: Act): LogEntry {
+    this.take(act, '');
+    const stamp = this.stamp();
+    if ('set' in act) return {...stamp, kind: 'set', set: act.set} satisfies EngineEntry;
+    if ('line' in act) return {...stamp, kind: 'line', line: act.line} satisfies EngineEntry;
+    return {...stamp, kind: 'disturb', disturb: act.disturb} satisfies EngineEntry;
+  }
+
+  note(note: Note): LogEntry {
+    return {...this.stamp(), ...note};
+  }
+
+  /** Takes an act for the next tick without a stamp; `at` names it in the faults. */
+  take(act: Act, at: string): void {
+    const faults = this.faultsOf(act, at);
+    if (faults.length > 0) throw new ScenarioError(faults);
+    this.pending.push(act);
+  }
+
+  /** Counts one entry of a log. */
+  stamp(): {readonly n: number; readonly tick: number} {
+    this.state[ENTRIES]!++;
+    return {n: this.state[ENTRIES]!, tick: this.tick};
+  }
+
+  advance(ticks: number, block?: TraceBlock): number {
+    const room = block === undefined ? ticks : Math.min(ticks, block.capacity - block.count);
+    let run = 0;
+    while (run < room && this.outcome.kind === 'running') {
+      this.runTick(block);
+      run++;
+    }
+    return run;
+  }
+
+  view(): RunView {
+    const {plantState: p, controlState: c, plant, tick} = this;
+    const tS = tick * this.grid.sampleS;
+    return {
+      tick,
+      tS,
+      phase: PHASES[c[control.PHASE]!]!,
+      tensionN: p[place.TENSION]!,
+      sampleN: this.state[SAMPLE]!,
+      measuredN: p[place.FILTER]!,
+      setPointN: c[control.SET_POINT]!,
+      outputPct: c[control.OUTPUT]!,
+      lineMps: plant.line.speedAt(tS),
+      lineTargetMps: plant.line.targetMps,
+      rollRadps: p[place.OMEGA]!,
+      rollRad: p[place.THETA]!,
+      radiusM: plant.path.radius(),
+      webLeftM: p[place.WOUND]!,
+      slackM: plant.path.slack(),
+      torqueNm: plant.path.torque(),
+      brakeC: p[place.HEAT]!,
+      dancerM: p[place.DANCER]!,
+      lineStands: plant.line.stands(tS),
+    };
+  }
+
+  hash(): RunHash {
+    return this.print.text();
+  }
+
+  save(): SavedRun {
+    const saved: Saved = {
+      state: this.state.slice(),
+      settings: this.inForce,
+      pending: [...this.pending],
+      events: [...this.watch.events],
+      outcome: this.outcome,
+    };
+    return saved;
+  }
+
+  load(saved: SavedRun): void {
+    const {state, settings, pending, events, outcome} = saved as Saved;
+    this.state.set(state);
+    this.inForce = settings;
+    this.pending = [...pending];
+    this.watch.events.splice(0, Infinity, ...events);
+    this.outcome = outcome;
+    this.plant.end = null;
+    this.plant.path.refresh();
+    this.controller.refresh(settings);
+  }
+
+  /** One control tick, in the order of the model: commands, measure, control, move. */
+  private runTick(block?: TraceBlock): void {
+    const {state, plantState, controlState, plant, seen} = this;
+    const tick = state[TICK]!;
+    const t = tick * this.grid.sampleS;
+    if (block !== undefined) this.writePlant(block, t);
+
+    this.applyDue(tick, t);
+    plant.openTick(t);
+    this.measure();
+    seen.tick = tick;
+    seen.stands = !seen.ran && plant.line.stands(t);
+    seen.radiusM = plant.path.radius();
+    seen.omegaRadps = plantState[place.OMEGA]!;
+    seen.lineMps = plant.line.c0[0]!;
+    seen.lineSlope = plant.line.c1[0]!;
+    const output = this.controller.tick(this.inForce, seen);
+    this.watch.phase(tick, controlState[control.PHASE]!);
+    if (block !== undefined) this.writeControl(block);
+
+    plant.move(tick, output, controlState[control.SET_POINT]!);
+    this.lookAround(tick);
+    state[TICK] = tick + 1;
+  }
+
+  /** Commands first, then changes, each the document's own before those of the log. */
+  private applyDue(tick: number, t: number): void {
+    const {state, seen, schedule, pending} = this;
+    seen.ran = false;
+    seen.stopped = null;
+    for (;;) {
+      const due = schedule.lines[state[NEXT_LINE]!];
+      if (due === undefined || due.tick > tick) break;
+      this.command(t, due.what);
+      state[NEXT_LINE]!++;
+    }
+    for (const act of pending) if ('line' in act) this.command(t, act.line);
+    for (;;) {
+      const due = schedule.changes[state[NEXT_CHANGE]!];
+      if (due === undefined || due.tick > tick) break;
+      this.change(t, due.what);
+      state[NEXT_CHANGE]!++;
+    }
+    for (const act of pending) if (!('line' in act)) this.change(t, act);
+    if (pending.length > 0) this.pending = [];
+  }
+
+  private command(t: number, line: LineCommand): void {
+    const {seen} = this;
+    mixLine(this.print, line);
+    this.plant.line.command(t, line);
+    if (line.command === 'run') {
+      seen.ran = true;
+      seen.stopped = null; // a run takes back a stop of the same tick: the line will run
+    } else seen.stopped ??= line.command;
+  }
+
+  private change(t: number, change: Change): void {
+    mixChange(this.print, change);
+    if ('set' in change) {
+      this.inForce = changed(this.inForce, change.set);
+      this.controller.refresh(this.inForce);
+      const entered = change.set.radiusEnteredM;
+      if (typeof entered === 'number') this.controller.enterRadius(entered);
+    } else this.plant.disturb(change.disturb, !this.seen.ran && this.plant.line.stands(t));
+  }
+
+  /** One sample; one draw of the generator whatever the phase. */
+  private measure(): void {
+    const {scenario, plantState, seen} = this;
+    const {sensing} = scenario;
+    if (sensing.kind === 'dancer') {
+      seen.dancerPct = (100 * plantState[place.DANCER]!) / sensing.travelM;
+      return;
+    }
+    seen.sampleN = cellSample(sensing, plantState[place.FILTER]!, nextNormal(this.random));
+    this.state[SAMPLE] = seen.sampleN;
+  }
+
+  private lookAround(tick: number): void {
+    const {plant, plantState, controlState, inForce} = this;
+    const {end} = plant;
+    if (!this.isFinite()) {
+      this.outcome = {kind: 'diverged', atTick: tick, atS: (tick + 1) * this.grid.sampleS};
+      return;
+    }
+    if (end !== null) {
+      const what = {kind: end.kind, atTick: tick, atS: end.atS};
+      const isBreak = end.kind === 'webBroke';
+      this.outcome = isBreak ? {...what, tensionN: end.tensionN} : what;
+      this.watch.add(isBreak ? {...what, value: end.tensionN} : what);
+    } else {
+      const limit = controlState[control.LIMIT]!;
+      this.watch.look(tick, {
+        slackM: plant.path.slack(),
+        strain: plantState[place.STRAIN]!,
+        brakeC: plantState[place.HEAT]!,
+        isAtStop: plant.path.atStop(),
+        limit,
+        limitPct: limit > 0 ? inForce.outMaxPct : inForce.outMinPct,
+      });
+    }
+    this.print.mixAll(this.printed);
+  }
+
+  /** Whether every number of the state that goes into the fingerprint is finite. */
+  private isFinite(): boolean {
+    const {state} = this;
+    let sum = 0;
+    for (let i = PRINTED_FROM; i < PRINTED_TO; i++) sum += state[i]! * 0;
+    return sum === 0;
+  }
+
+  /** Rules an act must keep: its own, and those with what it will meet. */
+  private faultsOf(act: Act, at: string): Fault[] {
+    if (this.outcome.kind !== 'running')
+      return [{path: at, value: this.outcome.kind, allowed: 'nothing more: the run has ended'}];
+    return faultsAhead(act, at, {
+      scenario: this.scenario,
+      tick: this.tick,
+      settings: this.inForce,
+      modulusPa: this.plantState[place.MODULUS]!,
+      largestRadiusM: this.plantState[place.LARGEST]!,
+      pending: this.pending,
+      later: this.schedule.changes.slice(this.state[NEXT_CHANGE]!),
+    });
+  }
+
+  private writePlant(block: TraceBlock, t: number): void {
+    const {plantState: p, plant} = this;
+    const row = block.count * TRACE_COLUMNS.length;
+    const {rows} = block;
+    rows[row + COLUMN.tensionN] = p[place.TENSION]!;
+    rows[row + COLUMN.measuredN] = p[place.FILTER]!;
+    rows[row + COLUMN.outputPct] = this.controlState[control.OUTPUT]!;
+    rows[row + COLUMN.lineMps] = plant.line.speedAt(t);
+    rows[row + COLUMN.rollRadps] = p[place.OMEGA]!;
+    rows[row + COLUMN.radiusM] = plant.path.radius();
+    rows[row + COLUMN.slackM] = plant.path.slack();
+    rows[row + COLUMN.torqueNm] = plant.path.torque();
+    rows[row + COLUMN.brakeC] = p[place.HEAT]!;
+    rows[row + COLUMN.dancerM] = p[place.DANCER]!;
+  }
+
+  private writeControl(block: TraceBlock): void {
+    const row = block.count * TRACE_COLUMNS.length;
+    block.rows[row + COLUMN.setPointN] = this.controlState[control.SET_POINT]!;
+    block.rows[row + COLUMN.phase] = this.controlState[control.PHASE]!;
+    block.count++;
+  }
+}
