@@ -44,12 +44,12 @@ export function watchChild(program, words, {cwd, env, show = false} = {}) {
 
 /**
  * Starts a program that stays, in a process group of its own, so that Ctrl-C reaches only the one who started it.
- * Its output goes to `log`. Resolves to `{pid, ended, stop}`.
+ * Its output goes to the file `log`, or is shown. Resolves to `{pid, ended, stop}`.
  */
 export async function startChild(program, words, {cwd, env, log}) {
-  const out = fs.openSync(log, 'a', 0o600);
+  const out = log ? fs.openSync(log, 'a', 0o600) : 'inherit';
   const child = spawn(program, words, {cwd, env, stdio: ['ignore', out, out], detached: true});
-  fs.closeSync(out);
+  if (log) fs.closeSync(out);
   const ended = new Promise((resolve) => {
     child.once('exit', (code, signal) => resolve({code, signal}));
     child.once('error', (error) => resolve({code: 127, signal: null, error}));

@@ -42,6 +42,7 @@ async function start() {
     PORT: String(port),
     SESSION_SECRET: process.env.SESSION_SECRET ?? sessionSecret(run),
     NODE_ENV: 'production',
+    ...(bringsDatabase ? {DEMO: '1'} : {}),
   };
   const accounts = bringsDatabase ? await seedOnce(env) : undefined;
   const programs = [];

@@ -1,7 +1,7 @@
 // Which port the server gets.
 import {portIsFree} from '../ports.mjs';
 
-const DEFAULT_PORT = 4380;
+const DEFAULT_PORT = 4000;
 /** How many ports after the default one are tried. */
 const TRIES = 50;
 
