@@ -1,0 +1,23 @@
+import {type Router} from 'express';
+import {type AppParts} from './app-parts';
+import {eventsFeature} from './features/events/events-feature';
+import {healthFeature} from './features/health/health-feature';
+import {peopleFeature} from './features/people/people-feature';
+import {sessionFeature} from './features/session/session-feature';
+import {type Feature} from './feature';
+
+/** What the server can do: one line per feature, in alphabetical order. */
+export const FEATURES: readonly Feature[] = [
+  eventsFeature,
+  healthFeature,
+  peopleFeature,
+  sessionFeature,
+];
+
+/** Every entity of every feature. */
+export const ENTITIES = FEATURES.flatMap(({entities}) => entities ?? []);
+
+/** Mounts every endpoint of every feature. */
+export function mountFeatures(router: Router, parts: AppParts): void {
+  for (const feature of FEATURES) feature.mount?.(router, parts);
+}

@@ -1,0 +1,5 @@
+import {type Feature} from '../../feature';
+import {OrganisationEntity} from './organisation-entity';
+import {PersonEntity} from './person-entity';
+
+export const peopleFeature: Feature = {entities: [OrganisationEntity, PersonEntity]};

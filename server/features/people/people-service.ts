@@ -1,0 +1,94 @@
+import {type DataSource, QueryFailedError} from 'typeorm';
+import {type Role} from '#shared/permissions';
+import {type Preferences} from '#shared/session/session';
+import {type Caller} from '../../caller';
+import {newId} from '../../db/new-id';
+import {AppError} from '../../errors';
+import {OrganisationEntity} from './organisation-entity';
+import {hashPassword, isPasswordOf} from './password';
+import {PersonEntity} from './person-entity';
+
+/** A person about to be made. */
+export interface PersonDraft {
+  readonly email: string;
+  readonly name: string;
+  readonly role: Role;
+  readonly password: string;
+}
+
+/** Who there is, and who may come in. */
+export class PeopleService {
+  constructor(private readonly db: DataSource) {}
+
+  /** The person with this address and password; who has left is refused like a stranger. */
+  async findBySignIn(email: string, password: string): Promise<PersonEntity | undefined> {
+    const person = await this.db.getRepository(PersonEntity).findOneBy({email, active: true});
+    const isRight = await isPasswordOf(person?.passwordHash, password);
+    return person && isRight ? person : undefined;
+  }
+
+  /** The caller a session belongs to, as things are now; nobody once the person has left. */
+  async findCaller(personId: string): Promise<Caller | undefined> {
+    const person = await this.db.getRepository(PersonEntity).findOne({
+      select: {id: true, organisationId: true, role: true},
+      where: {id: personId, active: true},
+    });
+    if (!person) return undefined;
+    return {personId: person.id, organisationId: person.organisationId, role: person.role};
+  }
+
+  /** The caller's own row, with the organisation. */
+  async getSelf(caller: Caller): Promise<PersonEntity> {
+    const {personId: id, organisationId} = caller;
+    const person = await this.db
+      .getRepository(PersonEntity)
+      .findOne({where: {id, organisationId}, relations: {organisation: true}});
+    if (!person) throw new AppError('not-signed-in');
+    return person;
+  }
+
+  async updatePreferences(caller: Caller, preferences: Preferences): Promise<PersonEntity> {
+    const {personId: id, organisationId} = caller;
+    await this.db.getRepository(PersonEntity).update({id, organisationId}, {preferences});
+    return this.getSelf(caller);
+  }
+
+  /** Accounts of the demo organisations, for the sign-in page of a demo. */
+  listDemoAccounts(): Promise<PersonEntity[]> {
+    return this.db.getRepository(PersonEntity).find({
+      where: {organisation: {isDemo: true}, active: true},
+      relations: {organisation: true},
+      order: {createdAt: 'asc', id: 'asc'},
+    });
+  }
+
+  /** The organisation of this name; made when there is none. */
+  async createOrganisation(name: string, isDemo = false): Promise<string> {
+    const organisations = this.db.getRepository(OrganisationEntity);
+    const id = newId();
+    await organisations.insert({id, name, isDemo});
+    return id;
+  }
+
+  /** Makes a person; nobody's address is told: one that exists is refused as in use. */
+  async createPerson(organisationId: string, draft: PersonDraft): Promise<string> {
+    const {email, name, role, password} = draft;
+    const id = newId();
+    const passwordHash = await hashPassword(password);
+    try {
+      await this.db
+        .getRepository(PersonEntity)
+        .insert({id, organisationId, email: email.toLowerCase(), name, role, passwordHash});
+    } catch (error) {
+      // QueryFailedError: unique_violation of the address
+      if (!isTakenAddress(error)) throw error;
+      throw new AppError('in-use', {detail: `The address ${email} is in use.`});
+    }
+    return id;
+  }
+}
+
+function isTakenAddress(error: unknown): boolean {
+  if (!(error instanceof QueryFailedError)) return false;
+  return (error.driverError as {constraint?: string}).constraint === 'person_email_key';
+}

@@ -1,0 +1,16 @@
+import {type Request} from 'express';
+import {type Caller} from '../../caller';
+
+/** Signs in under a new session: whoever knew the old one knows nothing of this one. */
+export function beginSession(req: Request, caller: Caller): Promise<void> {
+  return new Promise((resolve, reject) => {
+    req.logIn(caller, (error?: Error) => (error ? reject(error) : resolve())); // regenerates
+  });
+}
+
+/** Signs out and goes on under a new, empty session. */
+export function endSession(req: Request): Promise<void> {
+  return new Promise((resolve, reject) => {
+    req.logOut((error?: Error) => (error ? reject(error) : resolve())); // regenerates
+  });
+}

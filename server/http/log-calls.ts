@@ -1,0 +1,20 @@
+import {randomUUID} from 'node:crypto';
+import {type RequestHandler} from 'express';
+import {type Logger} from 'pino';
+import {pinoHttp} from 'pino-http';
+
+/** Logs each call with an id, which is also told to the caller. */
+export function logCalls(logger: Logger): RequestHandler {
+  return pinoHttp({
+    logger,
+    genReqId: (req, res) => {
+      const id = randomUUID();
+      res.setHeader('Request-Id', id);
+      return id;
+    },
+    serializers: {
+      req: ({id, method, url}: {id: string; method: string; url: string}) => ({id, method, url}),
+      res: ({statusCode}: {statusCode: number}) => ({statusCode}),
+    },
+  });
+}

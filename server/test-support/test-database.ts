@@ -1,0 +1,70 @@
+import {randomBytes} from 'node:crypto';
+import {Client} from 'pg';
+import {startPostgres} from '../../tools/pg.mjs';
+import {migrate} from '../db/migrate';
+
+/** The template is made and migrated once per process; every spec file gets a copy. */
+let template: Promise<{adminUrl: string; name: string}> | undefined;
+const mark = `evenspan_test_${process.pid}_${randomBytes(3).toString('hex')}`;
+let copies = 0;
+
+/** A database of one's own, migrated and empty. */
+export interface TestDatabase {
+  readonly url: string;
+  readonly drop: () => Promise<void>;
+}
+
+export async function makeTestDatabase(): Promise<TestDatabase> {
+  template ??= makeTemplate();
+  const {adminUrl, name: source} = await template;
+  const name = `${mark}_${(copies += 1)}`;
+  await ask(adminUrl, `create database ${name} template ${source}`);
+  return {
+    url: urlOf(adminUrl, name),
+    drop: () => ask(adminUrl, `drop database if exists ${name} with (force)`),
+  };
+}
+
+/** A database without a single table of ours. */
+export async function makeEmptyDatabase(): Promise<TestDatabase> {
+  template ??= makeTemplate();
+  const {adminUrl} = await template;
+  const name = `${mark}_${(copies += 1)}`;
+  await ask(adminUrl, `create database ${name}`);
+  return {
+    url: urlOf(adminUrl, name),
+    drop: () => ask(adminUrl, `drop database if exists ${name} with (force)`),
+  };
+}
+
+async function makeTemplate(): Promise<{adminUrl: string; name: string}> {
+  const given = process.env['DATABASE_URL_TEST_ADMIN'];
+  const own = given ? undefined : await startPostgres({sub: 'test', ephemeral: true});
+  const adminUrl = given ?? own?.url ?? '';
+  const name = `${mark}_template`;
+  await ask(adminUrl, `create database ${name}`);
+  await migrate({ownerUrl: urlOf(adminUrl, name)});
+  jasmine.getEnv().addReporter({
+    jasmineDone: async () => {
+      await ask(adminUrl, `drop database if exists ${name} with (force)`);
+      await own?.stop();
+    },
+  });
+  return {adminUrl, name};
+}
+
+function urlOf(adminUrl: string, name: string): string {
+  const url = new URL(adminUrl);
+  url.pathname = `/${name}`;
+  return url.href;
+}
+
+async function ask(url: string, sql: string): Promise<void> {
+  const client = new Client({connectionString: url});
+  await client.connect();
+  try {
+    await client.query(sql);
+  } finally {
+    await client.end();
+  }
+}

@@ -1,0 +1,114 @@
+import {createServer, type Server} from 'node:http';
+import {type AddressInfo} from 'node:net';
+import {pino} from 'pino';
+import supertest from 'supertest';
+import {type DataSource} from 'typeorm';
+import {type Role} from '#shared/permissions';
+import {type App, makeApp} from '../app';
+import {type AppParts} from '../app-parts';
+import {type Caller} from '../caller';
+import {readConfig} from '../config';
+import {makeDataSource} from '../db/data-source';
+import {EventHub} from '../events/event-hub';
+import {PeopleService} from '../features/people/people-service';
+import {makeJobSender} from '../jobs/boss';
+import {makeTestDatabase} from './test-database';
+
+export type Agent = ReturnType<typeof supertest.agent>;
+const PASSWORD = 'a password for tests';
+
+/** Somebody signed in: `agent` sends the cookie and the token of the session. */
+export interface SignedIn {
+  readonly agent: Agent;
+  readonly caller: Caller;
+  readonly email: string;
+}
+
+/** A server on loopback with a database of its own. */
+export class TestServer {
+  private people = 0;
+
+  constructor(
+    readonly parts: AppParts,
+    readonly app: App,
+    readonly http: Server,
+    /** Stops it and drops the database. */
+    readonly close: () => Promise<void>,
+  ) {}
+
+  get db(): DataSource {
+    return this.parts.db;
+  }
+
+  get url(): string {
+    return `http://127.0.0.1:${(this.http.address() as AddressInfo).port}`;
+  }
+
+  /** An agent that has read the session: it has a token, but nobody is signed in. */
+  async visitor(): Promise<Agent> {
+    const agent = supertest.agent(this.http);
+    keepToken(agent, await agent.get('/api/session').expect(200));
+    return agent;
+  }
+
+  /** Makes an organisation; its id. */
+  organisation(name = 'Sample Converting'): Promise<string> {
+    return new PeopleService(this.db).createOrganisation(name);
+  }
+
+  /** Makes a person of this role, in a new organisation unless one is given, and signs in. */
+  async signedInAs(role: Role, organisationId?: string): Promise<SignedIn> {
+    organisationId ??= await this.organisation();
+    const email = `${role}-${(this.people += 1)}@people.example`;
+    const draft = {email, name: `Sample ${role}`, role, password: PASSWORD};
+    const personId = await new PeopleService(this.db).createPerson(organisationId, draft);
+    const agent = await this.visitor();
+    keepToken(
+      agent,
+      await agent.post('/api/session').send({email, password: PASSWORD}).expect(200),
+    );
+    return {agent, caller: {personId, organisationId, role}, email};
+  }
+}
+
+/** Makes a server before the specs of this file and closes it after them. */
+export function useTestServer(settings: Record<string, string> = {}): () => TestServer {
+  let server: TestServer | undefined;
+  beforeAll(async () => (server = await startTestServer(settings)));
+  afterAll(() => server?.close());
+  return () => {
+    if (!server) throw new Error('the server exists only while specs run');
+    return server;
+  };
+}
+
+export async function startTestServer(settings: Record<string, string> = {}): Promise<TestServer> {
+  const database = await makeTestDatabase();
+  const config = readConfig({
+    DATABASE_URL: database.url,
+    SESSION_SECRET: 'only-for-tests'.repeat(4),
+    NODE_ENV: 'test',
+    LOG_LEVEL: 'silent',
+    ...settings,
+  });
+  const db = await makeDataSource(database.url).initialize();
+  const events = new EventHub();
+  const log = pino({level: config.logLevel});
+  const parts = {config, db, jobs: makeJobSender(), events, log, now: () => new Date()};
+  const app = makeApp(parts);
+  const http = createServer(app.express);
+  await new Promise<void>((resolve) => http.listen(0, '127.0.0.1', resolve));
+  return new TestServer(parts, app, http, async () => {
+    events.endAll();
+    http.closeAllConnections();
+    await new Promise((resolve) => http.close(resolve));
+    await db.destroy();
+    await database.drop();
+  });
+}
+
+function keepToken(agent: Agent, {headers}: supertest.Response): void {
+  const cookies = headers['set-cookie'] as unknown as string[];
+  const token = cookies.map((cookie) => /^XSRF-TOKEN=([^;]+)/.exec(cookie)?.[1]).find(Boolean);
+  if (token) agent.set('X-XSRF-TOKEN', token);
+}
