@@ -3,27 +3,17 @@ import {type Settings} from '../scenario/settings';
 import {Points} from '../signal/points';
 import * as at from './controller-state';
 import * as phases from './phases';
-import {clampOutput, pidOutput} from './pid';
+import {pidOutput} from './pid';
 import {moveRadius} from './radius';
+import * as seen from './seen';
 import {moveSetPoint} from './set-point';
+import * as set from './tuning';
 
-/** What the controller sees in one tick. */
-export interface Seen {
-  tick: number;
-  /** Sample of the load cell [N]. */
-  sampleN: number;
-  /** Dancer position [% of travel]. */
-  dancerPct: number;
-  ran: boolean;
-  stopped: 'stop' | 'fastStop' | null;
-  stands: boolean;
-  /** True mean radius [m]. */
-  radiusM: number;
-  omegaRadps: number;
-  /** Line speed without ripple [m/s] and its slope from this tick on [m/s²]. */
-  lineMps: number;
-  lineSlope: number;
-}
+/** Places of what the document fixes for the controller. */
+const PER_RANGE = 0; // 100/range [%/N]
+const PER_TORQUE = 1; // 1/(τ_max − τ_res) [1/(N·m)]
+const INERTIA_AT_ZERO = 2; // J = this + INERTIA_PER_FOURTH·R⁴ [kg·m²]
+const INERTIA_PER_FOURTH = 3;
 
 /** Inertia of the roll at a radius [kg·m²] = atZero + perFourth·R⁴, as the controller was told. */
 export interface InertiaLaw {
@@ -33,20 +23,24 @@ export interface InertiaLaw {
 
 /** The sampled controller: input, phase, set point, radius, output. Its state is the caller's typed array. */
 export class Controller {
+  /** What it sees; the caller fills it in before each tick. */
+  readonly news = new Float64Array(seen.SEEN_SIZE);
+  private readonly tuning = new Float64Array(set.TUNING_SIZE);
+  private readonly fixed = new Float64Array(4);
   private readonly isDancer: boolean;
-  private readonly rangeN: number;
-  private readonly perTorque: number;
   private gains: Points | null = null;
 
   constructor(
-    scenario: Scenario,
+    {sensing, brake}: Scenario,
     private readonly state: Float64Array,
-    private readonly inertia: InertiaLaw,
+    inertia: InertiaLaw,
   ) {
-    const {sensing, brake} = scenario;
     this.isDancer = sensing.kind === 'dancer';
-    this.rangeN = sensing.kind === 'loadCell' ? sensing.rangeN : 1;
-    this.perTorque = 1 / (brake.maxTorqueNm - (brake.residualTorqueNm ?? 0));
+    this.news[seen.SENSE] = this.isDancer ? -1 : 1;
+    this.fixed[PER_RANGE] = sensing.kind === 'loadCell' ? 100 / sensing.rangeN : 0;
+    this.fixed[PER_TORQUE] = 1 / (brake.maxTorqueNm - (brake.residualTorqueNm ?? 0));
+    this.fixed[INERTIA_AT_ZERO] = inertia.atZero;
+    this.fixed[INERTIA_PER_FOURTH] = inertia.perFourth;
   }
 
   /** State at power-up. */
@@ -60,8 +54,9 @@ export class Controller {
     this.refresh(settings);
   }
 
-  /** Renews what follows from the settings. */
+  /** Takes the settings in force. */
   refresh(settings: Settings): void {
+    set.tune(this.tuning, settings);
     this.gains = settings.gainByRadius === null ? null : new Points(settings.gainByRadius);
   }
 
@@ -70,75 +65,75 @@ export class Controller {
     this.state[at.RADIUS] = radiusM;
   }
 
-  /** One control tick; returns the output [%]. */
-  tick(settings: Settings, seen: Seen): number {
-    const {state, isDancer} = this;
-    this.readInput(settings, seen.sampleN);
-    const isTaut = !isDancer && state[at.INPUT]! > settings.closeAboveN;
-    phases.nextPhase(state, settings, seen.tick, seen, isTaut);
-    moveSetPoint(state, settings, seen.tick);
-    moveRadius(state, settings, seen);
-    const output = this.output(settings, seen);
-    state[at.OUTPUT] = output;
-    return output;
+  /** One control tick; the output lies in the state. */
+  tick(): void {
+    const {state, tuning, news} = this;
+    this.readInput();
+    const isTaut = !this.isDancer && state[at.INPUT]! > tuning[set.CLOSE_ABOVE]!;
+    phases.nextPhase(state, tuning, news, isTaut);
+    moveSetPoint(state, tuning, news[seen.TICK]!);
+    moveRadius(state, tuning, news);
+    if (this.isClosed()) {
+      this.prepare();
+      state[at.OUTPUT] = pidOutput(state, tuning, news);
+    } else {
+      state[at.OUTPUT] = this.openOutput();
+      state[at.CLOSED] = 0;
+      state[at.LIMIT] = 0;
+    }
   }
 
-  private readInput(settings: Settings, sampleN: number): void {
-    const {state} = this;
-    const {inputFilterS, sampleS} = settings;
-    const input =
-      (settings.inputSign * (sampleN - settings.zeroAdjustN) * settings.spanAdjustPct) / 100;
-    if (inputFilterS > 0 && state[at.HAS_INPUT] === 1)
-      state[at.INPUT]! += (sampleS / (sampleS + inputFilterS)) * (input - state[at.INPUT]!);
+  private readInput(): void {
+    const {state, tuning, news} = this;
+    const input = (news[seen.SAMPLE_N]! - tuning[set.ZERO_ADJUST]!) * tuning[set.INPUT_GAIN]!;
+    const filterS = tuning[set.INPUT_FILTER_S]!;
+    const sampleS = tuning[set.SAMPLE_S]!;
+    if (filterS > 0 && state[at.HAS_INPUT] === 1)
+      state[at.INPUT]! += (sampleS / (sampleS + filterS)) * (input - state[at.INPUT]!);
     else state[at.INPUT] = input;
     state[at.HAS_INPUT] = 1;
   }
 
-  private output(settings: Settings, seen: Seen): number {
-    const {state} = this;
-    const open = this.openOutput(settings, seen.tick);
-    if (open !== null) {
-      state[at.CLOSED] = 0;
-      state[at.LIMIT] = 0;
-      return open;
-    }
-    const radius = state[at.RADIUS]!;
-    return pidOutput(state, settings, {
-      y: this.isDancer ? seen.dancerPct : (100 * state[at.INPUT]!) / this.rangeN,
-      r: this.isDancer ? 50 : (100 * state[at.SET_POINT]!) / this.rangeN,
-      sense: this.isDancer ? -1 : 1,
-      kp: this.gains === null ? settings.kp : settings.kp * this.gains.at(radius),
-      compensation: settings.radiusCompensation ? radius / settings.radiusRefM! : 1,
-      assistPct: this.assist(settings, radius, seen.lineSlope),
-    });
+  /** Whether the PID is in charge of this phase. */
+  private isClosed(): boolean {
+    const {state, tuning} = this;
+    const phase = state[at.PHASE];
+    if (phase === phases.STARTING) return state[at.RAMPING] === 1;
+    if (phase === phases.STOPPING) return phases.holdTime(state, tuning) === 0;
+    return phase === phases.RUNNING;
   }
 
-  /** The output of a phase in which the loop is open; null while the PID is in charge. */
-  private openOutput(settings: Settings, tick: number): number | null {
-    const {state} = this;
-    switch (state[at.PHASE]) {
-      case phases.STANDSTILL:
-        return settings.standstillPct;
-      case phases.MANUAL:
-        return settings.manualPct;
-      case phases.STARTING:
-        return state[at.RAMPING] === 1 ? null : clampOutput(settings, settings.startOutputPct!);
-      case phases.STOPPING: {
-        if (phases.holdTime(state, settings) === 0) return null;
-        if (!phases.holds(state, settings, tick)) return settings.standstillPct;
-        const held = state[at.STOP_OUTPUT]! * phases.holdGain(state, settings);
-        return clampOutput(settings, held);
-      }
-      default:
-        return null;
-    }
+  /** Output of a phase in which the loop is open. */
+  private openOutput(): number {
+    const {state, tuning} = this;
+    const phase = state[at.PHASE];
+    if (phase === phases.MANUAL) return tuning[set.MANUAL_PCT]!;
+    if (phase === phases.STARTING) return set.clampOutput(tuning, tuning[set.START_PCT]!);
+    if (phase === phases.STOPPING && phases.holds(state, tuning, this.news[seen.TICK]!))
+      return set.clampOutput(tuning, state[at.STOP_OUTPUT]! * phases.holdGain(state, tuning));
+    return tuning[set.STANDSTILL_PCT]!;
+  }
+
+  /** What the PID works with in this tick. */
+  private prepare(): void {
+    const {state, tuning, news, gains, fixed} = this;
+    const radius = state[at.RADIUS]!;
+    const perReference = tuning[set.PER_REFERENCE]!;
+    const perRange = fixed[PER_RANGE]!;
+    news[seen.Y] = this.isDancer ? news[seen.DANCER_PCT]! : perRange * state[at.INPUT]!;
+    news[seen.R] = this.isDancer ? 50 : perRange * state[at.SET_POINT]!;
+    news[seen.GAIN] = gains === null ? tuning[set.KP]! : tuning[set.KP]! * gains.at(radius);
+    news[seen.COMPENSATION] = perReference === 0 ? 1 : radius * perReference;
+    news[seen.ASSIST_PCT] = this.assist(radius);
   }
 
   /** Output that brakes the roll's own inertia while the line slows down [%]. */
-  private assist(settings: Settings, radius: number, lineSlope: number): number {
-    if (settings.inertiaAssistPct === 0 || !(lineSlope < 0)) return 0;
+  private assist(radius: number): number {
+    const {tuning, fixed} = this;
+    const slope = this.news[seen.LINE_SLOPE]!;
+    if (tuning[set.ASSIST] === 0 || !(slope < 0)) return 0;
     const square = radius * radius;
-    const inertia = this.inertia.atZero + this.inertia.perFourth * (square * square);
-    return settings.inertiaAssistPct * ((inertia * -lineSlope) / radius) * this.perTorque;
+    const inertia = fixed[INERTIA_AT_ZERO]! + fixed[INERTIA_PER_FOURTH]! * (square * square);
+    return tuning[set.ASSIST]! * ((inertia * -slope) / radius) * fixed[PER_TORQUE]!;
   }
 }

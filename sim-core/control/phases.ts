@@ -1,5 +1,6 @@
-import {type Settings} from '../scenario/settings';
 import * as at from './controller-state';
+import * as seen from './seen';
+import * as set from './tuning';
 
 /** Numbers of the phases, as in a trace. */
 export const STANDSTILL = 0;
@@ -11,83 +12,75 @@ export const MANUAL = 4;
 /** A time counts as passed within this of a tick [s]. */
 const GRACE_S = 1e-9;
 
-/** What the line's commands and its movement mean for the phases in one tick. */
-export interface LineNews {
-  /** Whether a run command came in this tick. */
-  readonly ran: boolean;
-  /** The first stop command of this tick that no later run took back. */
-  readonly stopped: 'stop' | 'fastStop' | null;
-  readonly stands: boolean;
-}
-
-/** Moves on through the phases, each check once and in this order: mode, run, stop, hold, ramp, standing. */
+/**
+ * Moves on through the phases, each check once and in this order: mode, run, stop, hold, ramp, standing.
+ * `isTaut` says that the input lies above the tension at which a start closes its loop.
+ */
 export function nextPhase(
   state: Float64Array,
-  settings: Settings,
-  tick: number,
-  line: LineNews,
-  closesNow: boolean,
+  tuning: Float64Array,
+  news: Float64Array,
+  isTaut: boolean,
 ): void {
-  const {sampleS} = settings;
-  if (settings.mode === 'manual') state[at.PHASE] = MANUAL;
-  else if (state[at.PHASE] === MANUAL) state[at.PHASE] = line.stands ? STANDSTILL : RUNNING;
+  const stands = news[seen.STANDS] === 1;
+  const tick = news[seen.TICK]!;
+  if (tuning[set.IS_MANUAL] === 1) state[at.PHASE] = MANUAL;
+  else if (state[at.PHASE] === MANUAL) state[at.PHASE] = stands ? STANDSTILL : RUNNING;
 
-  if (line.ran) begin(state, settings, tick);
-  if (line.stopped !== null && isOneOf(state[at.PHASE]!, STARTING, RUNNING)) {
-    state[at.PHASE] = STOPPING;
-    state[at.STOP_AT] = tick;
-    state[at.STOP_IS_FAST] = line.stopped === 'fastStop' ? 1 : 0;
-    state[at.STOP_OUTPUT] = state[at.OUTPUT]!;
-  }
+  if (news[seen.RAN] === 1) begin(state, tuning, tick);
+  if (news[seen.STOPPED] !== seen.NO_STOP) halt(state, news, tick);
 
   if (state[at.PHASE] === STARTING && state[at.RAMPING] === 0) {
-    const isOver = hasPassed(tick - state[at.RUN_AT]!, sampleS, settings.startHoldS);
-    if (settings.startOutputPct === null || closesNow || isOver) {
+    const isOver = hasPassed(state[at.RUN_AT]!, tick, tuning, tuning[set.START_HOLD_S]!);
+    if (!set.hasStartOutput(tuning) || isTaut || isOver) {
       state[at.RAMPING] = 1;
       state[at.RAMP_AT] = tick;
     }
   }
   if (state[at.PHASE] === STARTING && state[at.RAMPING] === 1)
-    if (hasPassed(tick - state[at.RAMP_AT]!, sampleS, settings.startRampS))
+    if (hasPassed(state[at.RAMP_AT]!, tick, tuning, tuning[set.START_RAMP_S]!))
       state[at.PHASE] = RUNNING;
 
-  if (!line.stands) return;
+  if (!stands) return;
   if (state[at.PHASE] === RUNNING) state[at.PHASE] = STANDSTILL;
-  if (state[at.PHASE] === STOPPING && !holds(state, settings, tick)) state[at.PHASE] = STANDSTILL;
+  if (state[at.PHASE] === STOPPING && !holds(state, tuning, tick)) state[at.PHASE] = STANDSTILL;
 }
 
 /** Whether the stop-hold of the present stop still lasts; gain and time are read live. */
-export function holds(state: Float64Array, settings: Settings, tick: number): boolean {
-  return !hasPassed(tick - state[at.STOP_AT]!, settings.sampleS, holdTime(state, settings));
+export function holds(state: Float64Array, tuning: Float64Array, tick: number): boolean {
+  return !hasPassed(state[at.STOP_AT]!, tick, tuning, holdTime(state, tuning));
 }
 
 /** Time of the stop-hold in force [s]. */
-export function holdTime(state: Float64Array, settings: Settings): number {
-  if (state[at.STOP_IS_FAST] === 0) return settings.stopHoldS;
-  return settings.fastStopHoldS ?? settings.stopHoldS;
+export function holdTime(state: Float64Array, tuning: Float64Array): number {
+  return state[at.STOP_IS_FAST] === 1 ? tuning[set.FAST_HOLD_S]! : tuning[set.STOP_HOLD_S]!;
 }
 
 /** Factor of the stop-hold in force. */
-export function holdGain(state: Float64Array, settings: Settings): number {
-  if (state[at.STOP_IS_FAST] === 0) return settings.stopHoldGain;
-  return settings.fastStopGain ?? settings.stopHoldGain;
+export function holdGain(state: Float64Array, tuning: Float64Array): number {
+  return state[at.STOP_IS_FAST] === 1 ? tuning[set.FAST_GAIN]! : tuning[set.STOP_GAIN]!;
 }
 
 /** A run command: a start at standstill, straight to running while stopping, else no new phase. */
-function begin(state: Float64Array, settings: Settings, tick: number): void {
+function begin(state: Float64Array, tuning: Float64Array, tick: number): void {
   if (state[at.PHASE] === STOPPING) state[at.PHASE] = RUNNING;
   if (state[at.PHASE] !== STANDSTILL) return;
-  const skips = settings.startRampS === 0 && settings.startOutputPct === null;
-  state[at.PHASE] = skips ? RUNNING : STARTING;
+  const hasOutput = set.hasStartOutput(tuning);
+  state[at.PHASE] = tuning[set.START_RAMP_S] === 0 && !hasOutput ? RUNNING : STARTING;
   state[at.RUN_AT] = tick;
   state[at.RAMP_AT] = tick;
-  state[at.RAMPING] = settings.startOutputPct === null ? 1 : 0;
+  state[at.RAMPING] = hasOutput ? 0 : 1;
 }
 
-function hasPassed(ticks: number, sampleS: number, timeS: number): boolean {
-  return ticks * sampleS >= timeS - GRACE_S;
+/** A stop command; one that comes while stopping only renews the line's ramp. */
+function halt(state: Float64Array, news: Float64Array, tick: number): void {
+  if (state[at.PHASE] !== STARTING && state[at.PHASE] !== RUNNING) return;
+  state[at.PHASE] = STOPPING;
+  state[at.STOP_AT] = tick;
+  state[at.STOP_IS_FAST] = news[seen.STOPPED] === seen.FAST_STOP ? 1 : 0;
+  state[at.STOP_OUTPUT] = state[at.OUTPUT]!;
 }
 
-function isOneOf(phase: number, one: number, other: number): boolean {
-  return phase === one || phase === other;
+function hasPassed(since: number, tick: number, tuning: Float64Array, timeS: number): boolean {
+  return (tick - since) * tuning[set.SAMPLE_S]! >= timeS - GRACE_S;
 }

@@ -1,61 +1,48 @@
-import {type Settings} from '../scenario/settings';
 import * as at from './controller-state';
-
-/** What one tick of the PID works with, beside the settings. */
-export interface PidInput {
-  /** Controlled variable and its set point [% of range, or of the dancer's travel]. */
-  readonly y: number;
-  readonly r: number;
-  /** 1: more output raises y (load cell); −1: a rising y asks for more output (dancer). */
-  readonly sense: 1 | -1;
-  /** Gain in force [%/%]. */
-  readonly kp: number;
-  /** Factor of the radius compensation. */
-  readonly compensation: number;
-  /** Output added for the inertia of a slowing roll [%]. */
-  readonly assistPct: number;
-}
+import * as seen from './seen';
+import * as set from './tuning';
 
 /** One tick of the PID in ISA standard form; returns the output [%] and leaves I, d and the limit in the state. */
-export function pidOutput(state: Float64Array, settings: Settings, input: PidInput): number {
-  const {y, r, sense, kp, compensation, assistPct} = input;
-  const {sampleS, tiS, tdS, outMinPct, outMaxPct} = settings;
-  const proportional = sense * kp * (settings.setPointWeight * r - y);
+export function pidOutput(state: Float64Array, tuning: Float64Array, news: Float64Array): number {
+  const y = news[seen.Y]!;
+  const r = news[seen.R]!;
+  const assist = news[seen.ASSIST_PCT]!;
+  const compensation = news[seen.COMPENSATION]!;
+  const gain = news[seen.SENSE]! * news[seen.GAIN]!;
+  const sampleS = tuning[set.SAMPLE_S]!;
+  const proportional = gain * (tuning[set.WEIGHT]! * r - y);
 
   if (state[at.CLOSED] === 0) {
     // the loop closes: no derivative kick, and I such that the output goes on from the one in force
     state[at.LAST_Y] = y;
     state[at.DERIVATIVE] = 0;
-    if (settings.bumpless)
-      state[at.INTEGRAL] = (state[at.OUTPUT]! - assistPct) / compensation - proportional;
+    if (tuning[set.IS_BUMPLESS] === 1)
+      state[at.INTEGRAL] = (state[at.OUTPUT]! - assist) / compensation - proportional;
     state[at.CLOSED] = 1;
   }
 
+  const tdS = tuning[set.TD]!;
   if (tdS > 0) {
-    const filterS = tdS / settings.derivativeN;
+    const filterS = tdS / tuning[set.DERIVATIVE_N]!;
     const change = y - state[at.LAST_Y]!;
     state[at.DERIVATIVE] = (filterS * state[at.DERIVATIVE]! + change) / (filterS + sampleS);
   } else state[at.DERIVATIVE] = 0;
   state[at.LAST_Y] = y;
 
-  const derivative = sense * kp * tdS * state[at.DERIVATIVE]!;
-  const wanted = compensation * (proportional + state[at.INTEGRAL]! - derivative) + assistPct;
-  const output = clampOutput(settings, wanted);
-  state[at.LIMIT] = wanted >= outMaxPct ? 1 : wanted <= outMinPct ? -1 : 0;
+  const derivative = gain * tdS * state[at.DERIVATIVE]!;
+  const wanted = compensation * (proportional + state[at.INTEGRAL]! - derivative) + assist;
+  const output = set.clampOutput(tuning, wanted);
+  const limit = wanted >= tuning[set.OUT_MAX]! ? 1 : wanted <= tuning[set.OUT_MIN]! ? -1 : 0;
+  state[at.LIMIT] = limit;
 
+  const tiS = tuning[set.TI]!;
   if (tiS > 0) {
-    const error = sense * (r - y);
-    let step = ((kp * sampleS) / tiS) * error;
-    if (settings.antiWindup === 'conditional') {
-      if ((wanted >= outMaxPct && error > 0) || (wanted <= outMinPct && error < 0)) step = 0;
-    } else if (settings.antiWindup === 'backCalculation')
-      step += (sampleS / settings.trackingS!) * (output - wanted);
-    state[at.INTEGRAL]! += step;
+    const error = news[seen.SENSE]! * (r - y);
+    const step = ((news[seen.GAIN]! * sampleS) / tiS) * error;
+    const windup = tuning[set.WINDUP];
+    if (windup === set.BACK_CALCULATION)
+      state[at.INTEGRAL]! += step + (sampleS / tuning[set.TRACKING_S]!) * (output - wanted);
+    else if (windup === set.NO_ANTI_WINDUP || !(limit * error > 0)) state[at.INTEGRAL]! += step;
   }
   return output;
-}
-
-/** Within the output limits in force. */
-export function clampOutput({outMinPct, outMaxPct}: Settings, output: number): number {
-  return Math.min(Math.max(output, outMinPct), outMaxPct);
 }

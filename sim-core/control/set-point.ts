@@ -1,21 +1,22 @@
-import {type Settings} from '../scenario/settings';
 import * as at from './controller-state';
 import {STARTING} from './phases';
+import * as set from './tuning';
 
 /** Moves the set point now [N] by one tick: along the start ramp, or toward the target at its rate. */
-export function moveSetPoint(state: Float64Array, settings: Settings, tick: number): void {
-  const {setPointN, startFraction, startRampS, setPointRateNps, sampleS} = settings;
+export function moveSetPoint(state: Float64Array, tuning: Float64Array, tick: number): void {
+  const target = tuning[set.TARGET]!;
   if (state[at.PHASE] === STARTING) {
-    const isRamping = state[at.RAMPING] === 1;
-    const share = isRamping ? ((tick - state[at.RAMP_AT]!) * sampleS) / startRampS : 0;
-    state[at.SET_POINT] = setPointN * (startFraction + (1 - startFraction) * share);
+    const from = tuning[set.START_FRACTION]!;
+    const sinceS = (tick - state[at.RAMP_AT]!) * tuning[set.SAMPLE_S]!;
+    const share = state[at.RAMPING] === 1 ? sinceS / tuning[set.START_RAMP_S]! : 0;
+    state[at.SET_POINT] = target * (from + (1 - from) * share);
     return;
   }
-  if (setPointRateNps === 0) {
-    state[at.SET_POINT] = setPointN;
+  if (tuning[set.RATE] === 0) {
+    state[at.SET_POINT] = target;
     return;
   }
-  const most = setPointRateNps * sampleS;
+  const most = tuning[set.RATE]! * tuning[set.SAMPLE_S]!;
   const now = state[at.SET_POINT]!;
-  state[at.SET_POINT] = now + Math.min(Math.max(setPointN - now, -most), most);
+  state[at.SET_POINT] = now + Math.min(Math.max(target - now, -most), most);
 }

@@ -1,11 +1,13 @@
-import {type Brake} from './brake';
+import {type BrakeParams} from '../scenario/scenario';
 
 /** Places in the drive's part of the state, before its queue of commands. */
 const W = 0; // after play [%]
 const STUCK = 1; // after stick [%]
 const STARTED = 2;
 const SUPPLY = 3; // share of power or air, 0…1
-const QUEUE = 4;
+const HALF_PLAY = 4; // [%]
+const STICK = 5; // [%]
+const QUEUE = 6;
 
 /**
  * From the controller's output to the delayed command of the brake: play, stick, supply, dead time.
@@ -28,19 +30,21 @@ export class Drive {
 
   constructor(
     private readonly state: Float64Array,
-    private readonly brake: Brake,
-    deadTimeS: number,
+    brake: BrakeParams,
     plantStepS: number,
     stepsPerTick: number,
   ) {
+    const deadTimeS = brake.deadTimeS ?? 0;
     const steps = delaySteps(deadTimeS, plantStepS);
     this.delayTicks = Math.floor(steps / stepsPerTick);
     this.changesAtStep = steps - this.delayTicks * stepsPerTick;
     this.length = Drive.queueLength(deadTimeS, plantStepS, stepsPerTick);
   }
 
-  /** Before t = 0 the command was the standstill output. */
-  reset(standstillPct: number): void {
+  /** Puts in what never changes. Before t = 0 the command was the standstill output. */
+  reset(standstillPct: number, {playPct, stickPct}: BrakeParams): void {
+    this.state[HALF_PLAY] = (playPct ?? 0) / 2;
+    this.state[STICK] = stickPct ?? 0;
     this.state.fill(standstillPct, QUEUE, QUEUE + this.length);
     this.state[W] = standstillPct;
     this.state[STUCK] = standstillPct;
@@ -55,10 +59,10 @@ export class Drive {
   /** Takes the output of one tick. */
   command(tick: number, outputPct: number): void {
     const {state} = this;
-    const half = this.brake.playPct / 2;
+    const half = state[HALF_PLAY]!;
     const w = Math.min(Math.max(state[W]!, outputPct - half), outputPct + half);
     state[W] = w;
-    if (state[STARTED] === 0 || Math.abs(w - state[STUCK]!) > this.brake.stickPct) state[STUCK] = w;
+    if (state[STARTED] === 0 || Math.abs(w - state[STUCK]!) > state[STICK]!) state[STUCK] = w;
     state[STARTED] = 1;
     state[QUEUE + (tick % this.length)] = state[SUPPLY]! * state[STUCK]!;
   }

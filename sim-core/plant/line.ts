@@ -8,7 +8,8 @@ const EVER_RUN = 0;
 const TARGET = 1; // speed asked for [m/s]
 const RAMP_END = 2; // [s]
 const COUNT = 3; // segments kept
-const SEGMENTS = 4; // each: start [s], speed at its start [m/s], slope [m/s²]
+const ROUND_S = 4; // rounding time [s]
+const SEGMENTS = 5; // each: start [s], speed at its start [m/s], slope [m/s²]
 
 /** Most pieces of the rounded speed within one tick: a ramp's end, and edges leaving the mean. */
 const MOST_PIECES = 8;
@@ -30,13 +31,11 @@ export class Line {
     return SEGMENTS + 3 * (2 * Math.floor(roundS / sampleS + 1) + 6);
   }
 
-  constructor(
-    private readonly state: Float64Array,
-    private readonly roundS: number,
-  ) {}
+  constructor(private readonly state: Float64Array) {}
 
-  reset(): void {
+  reset(roundS: number): void {
     this.state.fill(0);
+    this.state[ROUND_S] = roundS;
     this.state[COUNT] = 1;
     this.state[SEGMENTS] = -1e9; // at rest since ever
   }
@@ -69,18 +68,19 @@ export class Line {
   stands(t: number): boolean {
     const {state} = this;
     if (state[EVER_RUN] === 0) return true;
-    return state[TARGET] === 0 && t >= state[RAMP_END]! + this.roundS - GRACE_S;
+    return state[TARGET] === 0 && t >= state[RAMP_END]! + this.state[ROUND_S]! - GRACE_S;
   }
 
   /** Rounded speed [m/s] at `t` [s]. */
   speedAt(t: number): number {
-    if (this.roundS === 0) return this.straightAt(this.segmentAt(t), t);
+    if (this.state[ROUND_S]! === 0) return this.straightAt(this.segmentAt(t), t);
     return this.meanBefore(t);
   }
 
   /** Lays out the speed of the tick that begins at `t` [s] and lasts `sampleS`. */
   openTick(t: number, sampleS: number): void {
-    const {ends, roundS} = this;
+    const {ends, state} = this;
+    const roundS = state[ROUND_S]!;
     this.forget(t);
     let pieces = 0;
     for (;;) {
@@ -110,7 +110,8 @@ export class Line {
 
   /** Where the profile, or the profile one rounding time ago, bends next within the tick. */
   private nextBend(t: number, after: number, sampleS: number): number {
-    const {state, roundS} = this;
+    const {state} = this;
+    const roundS = state[ROUND_S]!;
     let next = sampleS;
     const count = state[COUNT]!;
     for (let i = 0; i < count; i++) {
@@ -145,7 +146,8 @@ export class Line {
 
   /** Mean of the straight profile over the rounding time before `t`. */
   private meanBefore(t: number): number {
-    const {state, roundS} = this;
+    const {state} = this;
+    const roundS = state[ROUND_S]!;
     const from = t - roundS;
     const count = state[COUNT]!;
     const first = this.segmentAt(from);
@@ -164,7 +166,7 @@ export class Line {
   /** Drops segments that no mean will look at again. */
   private forget(t: number): void {
     const {state} = this;
-    const oldest = this.segmentAt(t - this.roundS - 2 * GRACE_S);
+    const oldest = this.segmentAt(t - this.state[ROUND_S]! - 2 * GRACE_S);
     if (oldest === 0) return;
     const count = state[COUNT]!;
     state.copyWithin(SEGMENTS, SEGMENTS + 3 * oldest, SEGMENTS + 3 * count);

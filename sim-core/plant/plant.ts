@@ -1,239 +1,18 @@
 import {type Disturbance, type Scenario} from '../scenario/scenario';
 import {decay} from '../signal/decay';
 import {Drive} from './drive';
+import {Equations} from './equations';
+import * as now from './evaluation';
 import {Line} from './line';
 import * as at from './plant-state';
-import {WebPath, withinTurn} from './web-path';
+import {endOf, regionOf, rest} from './regions';
+import {Stand, withinTurn} from './stand';
 
 /** How often a step that crosses a bend is halved; the last halves count as "at the bend". */
 const DEEPEST = 5;
 
 /** Times closer than this are the same moment [s]. */
 const SAME_S = 1e-12;
-
-/** How the plant's run came to an end. */
-export interface PlantEnd {
-  readonly kind: 'webBroke' | 'rollEmpty';
-  readonly atS: number;
-  readonly tensionN: number;
-}
-
-/**
- * The plant over one control tick: fourth-order Runge–Kutta steps of the plant step's parts, cut where the
- * line's speed bends and halved where the equations bend (stick, slack, stops, knees of the curve). The
- * drive's lag is followed exactly. Speed beats form here; the state is the caller's typed array.
- */
-export class Plant {
-  readonly line: Line;
-  readonly drive: Drive;
-  readonly path: WebPath;
-  /** How the run ended, once it has. */
-  end: PlantEnd | null = null;
-
-  private readonly y: Float64Array;
-  private readonly lagS: number;
-  private readonly hasFilter: boolean;
-  private readonly hasCell: boolean;
-
-  private readonly k1 = new Float64Array(at.INTEGRATED);
-  private readonly k2 = new Float64Array(at.INTEGRATED);
-  private readonly k3 = new Float64Array(at.INTEGRATED);
-  private readonly k4 = new Float64Array(at.INTEGRATED);
-  private readonly trial = new Float64Array(at.INTEGRATED);
-  /** State and slope at the start of a step, one pair a depth of halving. */
-  private readonly before = Array.from({length: DEEPEST + 1}, twoStates);
-  /** States integrated: all nine only with a dancer or a roller with run-out. */
-  private readonly count: number;
-
-  private region = 0;
-  private wanted = 0; // delayed command [%]
-  private stepS = 0; // for which the two factors below hold
-  private halfDecay = 1;
-  private fullDecay = 1;
-
-  static size(scenario: Scenario, grid: Grid): number {
-    return (
-      at.PLANT_SIZE +
-      Drive.size(scenario.brake.deadTimeS ?? 0, grid.plantStepS, grid.stepsPerTick) +
-      Line.size(scenario.lineRoundS ?? 0, grid.sampleS)
-    );
-  }
-
-  constructor(
-    scenario: Scenario,
-    private readonly state: Float64Array,
-    private readonly grid: Grid,
-  ) {
-    const {brake, span, sensing} = scenario;
-    const deadTimeS = brake.deadTimeS ?? 0;
-    const driveSize = Drive.size(deadTimeS, grid.plantStepS, grid.stepsPerTick);
-    const driveEnd = at.PLANT_SIZE + driveSize;
-    this.line = new Line(state.subarray(driveEnd), scenario.lineRoundS ?? 0);
-    this.path = new WebPath(scenario, state, this.line, grid.plantStepS);
-    this.drive = new Drive(
-      state.subarray(at.PLANT_SIZE, driveEnd),
-      this.path.brake,
-      deadTimeS,
-      grid.plantStepS,
-      grid.stepsPerTick,
-    );
-    this.y = state.subarray(0, at.INTEGRATED);
-    this.lagS = brake.lagS;
-    this.hasCell = sensing.kind === 'loadCell';
-    this.hasFilter = sensing.kind === 'loadCell' && sensing.filterS > 0;
-    this.count = this.hasCell && (span.rollerRunoutM ?? 0) === 0 ? at.DANCER : at.INTEGRATED;
-  }
-
-  /** State at t = 0. */
-  reset(standstillPct: number): void {
-    this.path.reset();
-    this.line.reset();
-    this.drive.reset(standstillPct);
-    this.state[at.DRIVE] = standstillPct;
-  }
-
-  disturb(values: Disturbance, lineStands: boolean): void {
-    if (values.supply !== undefined) this.drive.supply = values.supply;
-    this.path.disturb(values, lineStands);
-  }
-
-  /** Begins a tick, its commands and disturbances done: lays out the line's speed. */
-  openTick(t: number): void {
-    this.line.openTick(t, this.grid.sampleS);
-    this.path.tickS = t;
-    this.path.piece = 0;
-    if (this.hasFilter || !this.hasCell) return;
-    // no filter: the sample is the signal of this very moment
-    this.path.slopes(this.y, this.k1, 0);
-    this.y[at.FILTER] = this.path.signal(this.path.tensionN);
-  }
-
-  /** Moves the plant through the tick with this output and, for a dancer, this loading. */
-  move(tick: number, outputPct: number, loadingN: number): void {
-    const {path, grid, line, drive} = this;
-    drive.command(tick, outputPct);
-    path.loadingN = loadingN;
-    const early = drive.early(tick);
-    const late = drive.late(tick);
-    this.setCommand(drive.changesAtStep > 0 ? early : late);
-    path.piece = 0;
-    this.look(0);
-    if (this.ended(0)) return;
-
-    const {parts} = path;
-    const steps = grid.stepsPerTick * parts;
-    const changesAt = drive.changesAtStep * parts;
-    let from = 0;
-    for (let step = 1; step <= steps; step++) {
-      const to = (step * grid.sampleS) / steps;
-      while (path.piece + 1 < line.pieces && line.ends[path.piece]! < to - SAME_S) {
-        const bend = line.ends[path.piece]!;
-        if (bend > from + SAME_S) {
-          if (!this.step(from, bend - from, 0)) return;
-          from = bend;
-        }
-        path.piece++;
-        this.look(from);
-      }
-      if (!this.step(from, to - from, 0)) return;
-      from = to;
-      if (step === changesAt && early !== late) {
-        this.setCommand(late);
-        this.look(from);
-      }
-    }
-    this.close();
-  }
-
-  private setCommand(wantedPct: number): void {
-    this.wanted = wantedPct;
-    if (this.lagS === 0) this.state[at.DRIVE] = wantedPct;
-  }
-
-  /** Evaluates where the state stands and in which mode. */
-  private look(local: number): void {
-    this.path.drivePct = this.state[at.DRIVE]!;
-    this.path.settle(this.y, this.k1, local);
-    this.region = this.path.region(this.y);
-  }
-
-  private ended(local: number): boolean {
-    const kind = this.path.endOf(this.y);
-    if (kind === null) return false;
-    this.end = {kind, atS: this.path.tickS + local, tensionN: this.path.tensionN};
-    this.close();
-    return true;
-  }
-
-  private close(): void {
-    const {state, y, path} = this;
-    y[at.THETA] = withinTurn(y[at.THETA]!);
-    y[at.ROLLER] = withinTurn(y[at.ROLLER]!);
-    state[at.TENSION] = path.tensionN;
-    state[at.STRAIN] = path.strain;
-    if (this.hasCell && !this.hasFilter) y[at.FILTER] = path.signal(path.tensionN);
-  }
-
-  /** One step, halved while it crosses a bend. False when the run ended in it. */
-  private step(from: number, h: number, depth: number): boolean {
-    const {y, k1, path, state, count} = this;
-    const {state: y0, slope: s0} = this.before[depth]!;
-    const x0 = state[at.DRIVE]!;
-    for (let i = 0; i < count; i++) {
-      y0[i] = y[i]!;
-      s0[i] = k1[i]!;
-    }
-    this.rungeKutta(from, h);
-    const region = path.region(y);
-    if (region === this.region) return true;
-
-    if (depth < DEEPEST) {
-      for (let i = 0; i < count; i++) {
-        y[i] = y0[i]!;
-        k1[i] = s0[i]!;
-      }
-      state[at.DRIVE] = x0;
-      return this.step(from, h / 2, depth + 1) && this.step(from + h / 2, h / 2, depth + 1);
-    }
-    if (this.ended(from + h)) return false;
-    path.cross(y);
-    this.look(from + h);
-    return !this.ended(from + h);
-  }
-
-  /** Leaves the new state in `y`, its slope in `k1`. */
-  private rungeKutta(from: number, h: number): void {
-    const {y, k1, k2, k3, k4, trial, path, state, count} = this;
-    const half = h / 2;
-    const x0 = state[at.DRIVE]!;
-    let middle = x0;
-    let end = x0;
-    if (this.lagS > 0 && x0 !== this.wanted) {
-      if (h !== this.stepS) this.prepare(h);
-      middle = this.wanted + (x0 - this.wanted) * this.halfDecay;
-      end = this.wanted + (x0 - this.wanted) * this.fullDecay;
-    }
-    for (let i = 0; i < count; i++) trial[i] = y[i]! + half * k1[i]!;
-    path.drivePct = middle;
-    path.slopes(trial, k2, from + half);
-    for (let i = 0; i < count; i++) trial[i] = y[i]! + half * k2[i]!;
-    path.slopes(trial, k3, from + half);
-    for (let i = 0; i < count; i++) trial[i] = y[i]! + h * k3[i]!;
-    path.drivePct = end;
-    path.slopes(trial, k4, from + h);
-    const sixth = h / 6;
-    for (let i = 0; i < count; i++)
-      y[i] = y[i]! + sixth * (k1[i]! + 2 * (k2[i]! + k3[i]!) + k4[i]!);
-    state[at.DRIVE] = end;
-    path.slopes(y, k1, from + h);
-  }
-
-  private prepare(h: number): void {
-    this.stepS = h;
-    this.halfDecay = decay(h / (2 * this.lagS));
-    this.fullDecay = this.halfDecay * this.halfDecay;
-  }
-}
 
 /** Steps in time: the control tick and the plant steps in it. */
 export interface Grid {
@@ -242,6 +21,268 @@ export interface Grid {
   readonly stepsPerTick: number;
 }
 
+/** How the plant's run came to an end. */
+export interface PlantEnd {
+  readonly kind: 'webBroke' | 'rollEmpty';
+  readonly atS: number;
+  readonly tensionN: number;
+}
+
+/** Places in the times of the integration, in a typed array as they change with every step. */
+const FROM = 0; // start of the step within the tick [s]
+const STEP = 1; // its length [s]
+const WANTED = 2; // delayed command of the drive [%]
+const PREPARED = 3; // step for which the two factors below hold [s]
+const HALF_DECAY = 4;
+const FULL_DECAY = 5;
+const LAG = 6; // of the drive [s]
+
+/**
+ * The plant over one control tick: fourth-order Runge–Kutta steps of the plant step's parts, cut where the
+ * line's speed bends and halved where the equations bend (stick, slack, stops, knees of the curve). The
+ * drive's lag is followed exactly. Speed beats form here; the state is the caller's typed array.
+ */
+export class Plant {
+  readonly line: Line;
+  readonly stand: Stand;
+  readonly equations: Equations;
+  /** How the run ended, once it has. */
+  end: PlantEnd | null = null;
+
+  private readonly drive: Drive;
+  private readonly y: Float64Array;
+  private readonly hasCell: boolean;
+  private readonly hasFilter: boolean;
+  private readonly times = new Float64Array(7);
+  private readonly k1 = new Float64Array(at.INTEGRATED);
+  private readonly k2 = new Float64Array(at.INTEGRATED);
+  private readonly k3 = new Float64Array(at.INTEGRATED);
+  private readonly k4 = new Float64Array(at.INTEGRATED);
+  private readonly trial = new Float64Array(at.INTEGRATED);
+  /** State and slope at the start of a step, one pair for each depth of halving. */
+  private readonly before = Array.from({length: DEEPEST + 1}, twoStates);
+  /** States integrated: all of them only with a dancer or a roller with run-out. */
+  private readonly count: number;
+  private region = 0;
+  private piece = 0;
+
+  static size(scenario: Scenario, grid: Grid): number {
+    const drive = Drive.size(scenario.brake.deadTimeS ?? 0, grid.plantStepS, grid.stepsPerTick);
+    return at.PLANT_SIZE + drive + Line.size(scenario.lineRoundS ?? 0, grid.sampleS);
+  }
+
+  constructor(
+    private readonly scenario: Scenario,
+    private readonly state: Float64Array,
+    private readonly grid: Grid,
+  ) {
+    const {brake, sensing} = scenario;
+    const {plantStepS, stepsPerTick} = grid;
+    const deadTimeS = brake.deadTimeS ?? 0;
+    const driveEnd = at.PLANT_SIZE + Drive.size(deadTimeS, plantStepS, stepsPerTick);
+    const driveState = state.subarray(at.PLANT_SIZE, driveEnd);
+    this.line = new Line(state.subarray(driveEnd));
+    this.equations = new Equations(scenario, state);
+    this.stand = new Stand(scenario, state, this.equations, plantStepS);
+    this.drive = new Drive(driveState, brake, plantStepS, stepsPerTick);
+    this.y = state.subarray(0, at.INTEGRATED);
+    this.times[LAG] = brake.lagS;
+    this.hasCell = sensing.kind === 'loadCell';
+    this.hasFilter = this.equations.hasFilter;
+    const isShort = this.hasCell && !this.equations.hasRunout;
+    this.count = isShort ? at.DANCER : at.INTEGRATED;
+  }
+
+  /** State at t = 0. */
+  reset(standstillPct: number): void {
+    const {brake, lineRoundS} = this.scenario;
+    this.stand.reset();
+    this.line.reset(lineRoundS ?? 0);
+    this.drive.reset(standstillPct, brake);
+    this.state[at.DRIVE] = standstillPct;
+  }
+
+  disturb(values: Disturbance, lineStands: boolean): void {
+    if (values.supply !== undefined) this.drive.supply = values.supply;
+    this.stand.disturb(values, lineStands);
+  }
+
+  /** Begins a tick, its commands and disturbances done: lays out the line's speed. */
+  openTick(t: number): void {
+    const {equations, y} = this;
+    this.line.openTick(t, this.grid.sampleS);
+    equations.now[now.TICK_S] = t;
+    this.piece = 0;
+    equations.setPiece(this.line, 0);
+    if (this.hasFilter || !this.hasCell) return;
+    // no filter: the sample is the signal of this very moment
+    equations.now[now.CLOCK] = 0;
+    equations.slopes(y, this.k1);
+    y[at.FILTER] = equations.signal(equations.now[now.TENSION_NOW]!);
+  }
+
+  /** Moves the plant through the tick with this output and, for a dancer, this loading. */
+  move(tick: number, outputPct: number, loadingN: number): void {
+    const {equations, grid, drive, times, stand} = this;
+    drive.command(tick, outputPct);
+    equations.now[now.LOADING] = loadingN;
+    const early = drive.early(tick);
+    const late = drive.late(tick);
+    this.setCommand(drive.changesAtStep > 0 ? early : late);
+    times[FROM] = 0;
+    this.look();
+    if (this.ended()) return;
+
+    const steps = grid.stepsPerTick * stand.parts;
+    const changesAt = drive.changesAtStep * stand.parts;
+    for (let step = 1; step <= steps; step++) {
+      if (!this.moveTo((step * grid.sampleS) / steps)) return;
+      if (step === changesAt && early !== late) {
+        this.setCommand(late);
+        this.look();
+      }
+    }
+    this.close();
+  }
+
+  /** Moves on to a time within the tick, cutting where the line's speed bends. False when the run ended. */
+  private moveTo(to: number): boolean {
+    const {line, times} = this;
+    while (this.piece + 1 < line.pieces && line.ends[this.piece]! < to - SAME_S) {
+      const bend = line.ends[this.piece]!;
+      if (bend > times[FROM]! + SAME_S) {
+        times[STEP] = bend - times[FROM]!;
+        if (!this.step(0)) return false;
+        times[FROM] = bend;
+      }
+      this.piece++;
+      this.equations.setPiece(line, this.piece);
+      this.look();
+    }
+    times[STEP] = to - times[FROM]!;
+    if (!this.step(0)) return false;
+    times[FROM] = to;
+    return true;
+  }
+
+  private setCommand(wantedPct: number): void {
+    const {times} = this;
+    times[WANTED] = wantedPct;
+    if (times[LAG]! === 0) this.state[at.DRIVE] = wantedPct;
+  }
+
+  /** Evaluates where the state stands and in which mode. */
+  private look(): void {
+    const {equations, y} = this;
+    equations.now[now.CLOCK] = this.times[FROM]!;
+    equations.now[now.DRIVE_PCT] = this.state[at.DRIVE]!;
+    equations.settle(y, this.k1);
+    this.region = regionOf(equations, y);
+  }
+
+  private ended(): boolean {
+    const {equations, times} = this;
+    const kind = endOf(equations, this.y);
+    if (kind === null) return false;
+    const atS = equations.now[now.TICK_S]! + times[FROM]!;
+    this.end = {kind, atS, tensionN: equations.now[now.TENSION_NOW]!};
+    this.close();
+    return true;
+  }
+
+  private close(): void {
+    const {state, y, equations} = this;
+    y[at.THETA] = withinTurn(y[at.THETA]!);
+    y[at.ROLLER] = withinTurn(y[at.ROLLER]!);
+    state[at.TENSION] = equations.now[now.TENSION_NOW]!;
+    state[at.STRAIN] = equations.now[now.STRAIN_NOW]!;
+    if (this.hasCell && !this.hasFilter) y[at.FILTER] = equations.signal(state[at.TENSION]);
+  }
+
+  /** One step of STEP from FROM, halved while it crosses a bend. False when the run ended in it. */
+  private step(depth: number): boolean {
+    const {y, k1, state, count} = this;
+    const {state: y0, slope: s0} = this.before[depth]!;
+    for (let i = 0; i < count; i++) {
+      y0[i] = y[i]!;
+      s0[i] = k1[i]!;
+    }
+    y0[at.DRIVE] = state[at.DRIVE]!;
+    this.rungeKutta();
+    if (regionOf(this.equations, y) === this.region) return true;
+    return depth < DEEPEST ? this.halve(depth) : this.cross();
+  }
+
+  /** Takes a step back and does it again in two halves. */
+  private halve(depth: number): boolean {
+    const {y, k1, state, count, times} = this;
+    const {state: y0, slope: s0} = this.before[depth]!;
+    for (let i = 0; i < count; i++) {
+      y[i] = y0[i]!;
+      k1[i] = s0[i]!;
+    }
+    state[at.DRIVE] = y0[at.DRIVE]!;
+    const from = times[FROM]!;
+    const half = times[STEP]! / 2;
+    for (let part = 0; part < 2; part++) {
+      times[FROM] = from + part * half;
+      times[STEP] = half;
+      if (!this.step(depth + 1)) return false;
+    }
+    return true;
+  }
+
+  /** At a bend, near enough: the state rests where it must, and its mode is found anew. */
+  private cross(): boolean {
+    const {times} = this;
+    times[FROM] = times[FROM]! + times[STEP]!;
+    if (this.ended()) return false;
+    rest(this.equations, this.y);
+    this.look();
+    return !this.ended();
+  }
+
+  /** Leaves the new state in `y`, its slope in `k1`. */
+  private rungeKutta(): void {
+    const {y, k1, k2, k3, k4, trial, equations, state, count, times} = this;
+    const {now: n} = equations;
+    const from = times[FROM]!;
+    const h = times[STEP]!;
+    const half = h / 2;
+    const x0 = state[at.DRIVE]!;
+    let middle = x0;
+    let end = x0;
+    const gap = x0 - times[WANTED]!;
+    if (gap !== 0 && times[LAG]! > 0) {
+      if (h !== times[PREPARED]) this.prepare();
+      middle = times[WANTED]! + gap * times[HALF_DECAY]!;
+      end = times[WANTED]! + gap * times[FULL_DECAY]!;
+    }
+    n[now.CLOCK] = from + half;
+    n[now.DRIVE_PCT] = middle;
+    for (let i = 0; i < count; i++) trial[i] = y[i]! + half * k1[i]!;
+    equations.slopes(trial, k2);
+    for (let i = 0; i < count; i++) trial[i] = y[i]! + half * k2[i]!;
+    equations.slopes(trial, k3);
+    n[now.CLOCK] = from + h;
+    n[now.DRIVE_PCT] = end;
+    for (let i = 0; i < count; i++) trial[i] = y[i]! + h * k3[i]!;
+    equations.slopes(trial, k4);
+    const sixth = h / 6;
+    for (let i = 0; i < count; i++) y[i]! += sixth * (k1[i]! + 2 * (k2[i]! + k3[i]!) + k4[i]!);
+    state[at.DRIVE] = end;
+    equations.slopes(y, k1);
+  }
+
+  private prepare(): void {
+    const {times} = this;
+    const half = decay(times[STEP]! / (2 * times[LAG]!));
+    times[PREPARED] = times[STEP]!;
+    times[HALF_DECAY] = half;
+    times[FULL_DECAY] = half * half;
+  }
+}
+
 function twoStates(): {readonly state: Float64Array; readonly slope: Float64Array} {
-  return {state: new Float64Array(at.INTEGRATED), slope: new Float64Array(at.INTEGRATED)};
+  return {state: new Float64Array(at.INTEGRATED + 1), slope: new Float64Array(at.INTEGRATED)};
 }

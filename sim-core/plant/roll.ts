@@ -1,42 +1,33 @@
 import {type Scenario} from '../scenario/scenario';
 import {PI} from '../signal/sine';
+import * as now from './evaluation';
 
-/** What of a roll never changes, prepared once. */
-export interface RollShape {
-  /** Core radius squared [m²]. */
-  readonly coreSquare: number;
-  /** Thickness over π [m]: R² = core² + this × wound length. */
-  readonly perLength: number;
-  /** Inertia J = atZero + perFourth·R⁴ [kg·m²]. */
-  readonly atZero: number;
-  /** [kg/m²] */
-  readonly perFourth: number;
-}
-
-export function rollShape({web, roll}: Scenario): RollShape {
+/** Fills in what of the roll never changes. */
+export function fixRoll(n: Float64Array, {web, roll}: Scenario): void {
   const coreSquare = roll.coreRadiusM * roll.coreRadiusM;
   const perFourth = 0.5 * PI * web.densityKgM3 * web.widthM;
-  return {
-    coreSquare,
-    perLength: web.thicknessM / PI,
-    atZero: roll.coreInertiaKgM2 - perFourth * (coreSquare * coreSquare),
-    perFourth,
-  };
+  n[now.CORE_SQUARE] = coreSquare;
+  n[now.PER_LENGTH] = web.thicknessM / PI;
+  n[now.INERTIA_AT_ZERO] = roll.coreInertiaKgM2 - perFourth * (coreSquare * coreSquare);
+  n[now.INERTIA_PER_FOURTH] = perFourth;
+  n[now.WOUND_N] = roll.woundTensionN;
+  n[now.COULOMB] = roll.coulombNm ?? 0;
+  n[now.VISCOUS] = roll.viscousNmS ?? 0;
 }
 
 /** Relaxed length [m] on a roll of this mean radius [m]. */
-export function woundLength(shape: RollShape, radiusM: number): number {
-  return (radiusM * radiusM - shape.coreSquare) / shape.perLength;
+export function woundLength(n: Float64Array, radiusM: number): number {
+  return (radiusM * radiusM - n[now.CORE_SQUARE]!) / n[now.PER_LENGTH]!;
 }
 
-/** Mean radius [m] of a roll that holds this relaxed length [m]. */
-export function meanRadius(shape: RollShape, lengthM: number): number {
-  return Math.sqrt(shape.coreSquare + shape.perLength * lengthM);
+/** Square of the mean radius [m²] of a roll that holds this relaxed length [m]. */
+export function radiusSquare(n: Float64Array, lengthM: number): number {
+  return n[now.CORE_SQUARE]! + n[now.PER_LENGTH]! * lengthM;
 }
 
 /** Inertia [kg·m²] at a mean radius squared [m²]. */
-export function inertia(shape: RollShape, squareM2: number): number {
-  return shape.atZero + shape.perFourth * (squareM2 * squareM2);
+export function inertia(n: Float64Array, squareM2: number): number {
+  return n[now.INERTIA_AT_ZERO]! + n[now.INERTIA_PER_FOURTH]! * (squareM2 * squareM2);
 }
 
 /** What an out-of-round roll adds to the mean radius [m], from the cosine of its angle. */

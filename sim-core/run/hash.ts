@@ -19,8 +19,8 @@ export class Fingerprint {
   mixAll(words: Uint32Array): void {
     let a = this.state[0]! | 0;
     let b = this.state[1]! | 0;
-    for (const word of words) {
-      a = Math.imul(a ^ word, 0x85ebca6b);
+    for (let i = 0; i < words.length; i++) {
+      a = Math.imul(a ^ words[i]!, 0x85ebca6b);
       a ^= a >>> 15;
       b = Math.imul((b << 7) | (b >>> 25), 5) ^ a;
     }

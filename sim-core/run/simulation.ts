@@ -1,5 +1,7 @@
 import * as control from '../control/controller-state';
-import {Controller, type Seen} from '../control/controller';
+import {Controller} from '../control/controller';
+import * as seen from '../control/seen';
+import * as now from '../plant/evaluation';
 import * as place from '../plant/plant-state';
 import {type Grid, Plant} from '../plant/plant';
 import {cellSample} from '../plant/sensing';
@@ -61,18 +63,8 @@ export class Simulation implements Run {
   private readonly watch: Watch;
   private inForce: Settings;
   private pending: Act[] = [];
-  private readonly seen: Seen = {
-    tick: 0,
-    sampleN: 0,
-    dancerPct: 0,
-    ran: false,
-    stopped: null,
-    stands: true,
-    radiusM: 0,
-    omegaRadps: 0,
-    lineMps: 0,
-    lineSlope: 0,
-  };
+  private readonly news: Float64Array;
+  private readonly isDancer: boolean;
 
   /** `scenario` has been checked. */
   constructor(private readonly scenario: Scenario) {
@@ -92,7 +84,13 @@ export class Simulation implements Run {
 
     this.print = new Fingerprint(this.state.subarray(PRINT, TICK));
     this.plant = new Plant(scenario, this.plantState, this.grid);
-    this.controller = new Controller(scenario, this.controlState, this.plant.path.shape);
+    const {now: n} = this.plant.equations;
+    this.controller = new Controller(scenario, this.controlState, {
+      atZero: n[now.INERTIA_AT_ZERO]!,
+      perFourth: n[now.INERTIA_PER_FOURTH]!,
+    });
+    this.news = this.controller.news;
+    this.isDancer = scenario.sensing.kind === 'dancer';
     const stretchLimit = (web.stretchLimitPct ?? 1e9) / 100;
     const watchState = this.state.subarray(WATCH, CONTROLLER);
     this.watch = new Watch(watchState, sampleS, stretchLimit, brake.limitC ?? 150);
@@ -100,7 +98,7 @@ export class Simulation implements Run {
     this.print.reset();
     seedWords(this.random, scenario.seed);
     this.plant.reset(standstillPct);
-    this.controller.reset(this.inForce, this.plant.path.radius());
+    this.controller.reset(this.inForce, this.plant.stand.radius());
   }
 
   get tick(): number {
@@ -166,10 +164,10 @@ export class Simulation implements Run {
       lineTargetMps: plant.line.targetMps,
       rollRadps: p[place.OMEGA]!,
       rollRad: p[place.THETA]!,
-      radiusM: plant.path.radius(),
+      radiusM: plant.stand.radius(),
       webLeftM: p[place.WOUND]!,
-      slackM: plant.path.slack(),
-      torqueNm: plant.path.torque(),
+      slackM: plant.stand.slack(),
+      torqueNm: plant.stand.torque(),
       brakeC: p[place.HEAT]!,
       dancerM: p[place.DANCER]!,
       lineStands: plant.line.stands(tS),
@@ -199,13 +197,13 @@ export class Simulation implements Run {
     this.watch.events.splice(0, Infinity, ...events);
     this.outcome = outcome;
     this.plant.end = null;
-    this.plant.path.refresh();
+    this.plant.stand.refresh();
     this.controller.refresh(settings);
   }
 
   /** One control tick, in the order of the model: commands, measure, control, move. */
   private runTick(block?: TraceBlock): void {
-    const {state, plantState, controlState, plant, seen} = this;
+    const {state, plantState, controlState, plant, news} = this;
     const tick = state[TICK]!;
     const t = tick * this.grid.sampleS;
     if (block !== undefined) this.writePlant(block, t);
@@ -213,26 +211,26 @@ export class Simulation implements Run {
     this.applyDue(tick, t);
     plant.openTick(t);
     this.measure();
-    seen.tick = tick;
-    seen.stands = !seen.ran && plant.line.stands(t);
-    seen.radiusM = plant.path.radius();
-    seen.omegaRadps = plantState[place.OMEGA]!;
-    seen.lineMps = plant.line.c0[0]!;
-    seen.lineSlope = plant.line.c1[0]!;
-    const output = this.controller.tick(this.inForce, seen);
+    news[seen.TICK] = tick;
+    news[seen.STANDS] = this.lineStands(t) ? 1 : 0;
+    news[seen.MEAN_RADIUS] = plant.stand.radius();
+    news[seen.OMEGA] = plantState[place.OMEGA]!;
+    news[seen.LINE_MPS] = plant.line.c0[0]!;
+    news[seen.LINE_SLOPE] = plant.line.c1[0]!;
+    this.controller.tick();
     this.watch.phase(tick, controlState[control.PHASE]!);
     if (block !== undefined) this.writeControl(block);
 
-    plant.move(tick, output, controlState[control.SET_POINT]!);
+    plant.move(tick, controlState[control.OUTPUT]!, controlState[control.SET_POINT]!);
     this.lookAround(tick);
     state[TICK] = tick + 1;
   }
 
   /** Commands first, then changes, each the document's own before those of the log. */
   private applyDue(tick: number, t: number): void {
-    const {state, seen, schedule, pending} = this;
-    seen.ran = false;
-    seen.stopped = null;
+    const {state, news, schedule, pending} = this;
+    news[seen.RAN] = 0;
+    news[seen.STOPPED] = seen.NO_STOP;
     for (;;) {
       const due = schedule.lines[state[NEXT_LINE]!];
       if (due === undefined || due.tick > tick) break;
@@ -251,13 +249,14 @@ export class Simulation implements Run {
   }
 
   private command(t: number, line: LineCommand): void {
-    const {seen} = this;
+    const {news} = this;
     mixLine(this.print, line);
     this.plant.line.command(t, line);
     if (line.command === 'run') {
-      seen.ran = true;
-      seen.stopped = null; // a run takes back a stop of the same tick: the line will run
-    } else seen.stopped ??= line.command;
+      news[seen.RAN] = 1;
+      news[seen.STOPPED] = seen.NO_STOP; // a run takes back a stop of the same tick: the line will run
+    } else if (news[seen.STOPPED] === seen.NO_STOP)
+      news[seen.STOPPED] = line.command === 'fastStop' ? seen.FAST_STOP : seen.STOP;
   }
 
   private change(t: number, change: Change): void {
@@ -267,19 +266,25 @@ export class Simulation implements Run {
       this.controller.refresh(this.inForce);
       const entered = change.set.radiusEnteredM;
       if (typeof entered === 'number') this.controller.enterRadius(entered);
-    } else this.plant.disturb(change.disturb, !this.seen.ran && this.plant.line.stands(t));
+    } else this.plant.disturb(change.disturb, this.lineStands(t));
   }
 
   /** One sample; one draw of the generator whatever the phase. */
   private measure(): void {
-    const {scenario, plantState, seen} = this;
-    const {sensing} = scenario;
-    if (sensing.kind === 'dancer') {
-      seen.dancerPct = (100 * plantState[place.DANCER]!) / sensing.travelM;
+    const {plantState, news, plant} = this;
+    const {now: n} = plant.equations;
+    if (this.isDancer) {
+      news[seen.DANCER_PCT] = (100 * plantState[place.DANCER]!) / n[now.TRAVEL]!;
       return;
     }
-    seen.sampleN = cellSample(sensing, plantState[place.FILTER]!, nextNormal(this.random));
-    this.state[SAMPLE] = seen.sampleN;
+    const sample = cellSample(n, plantState[place.FILTER]!, nextNormal(this.random));
+    news[seen.SAMPLE_N] = sample;
+    this.state[SAMPLE] = sample;
+  }
+
+  /** At the tick of a run the line does not stand. */
+  private lineStands(t: number): boolean {
+    return this.news[seen.RAN] === 0 && this.plant.line.stands(t);
   }
 
   private lookAround(tick: number): void {
@@ -297,10 +302,10 @@ export class Simulation implements Run {
     } else {
       const limit = controlState[control.LIMIT]!;
       this.watch.look(tick, {
-        slackM: plant.path.slack(),
+        slackM: plant.stand.slack(),
         strain: plantState[place.STRAIN]!,
         brakeC: plantState[place.HEAT]!,
-        isAtStop: plant.path.atStop(),
+        isAtStop: plant.equations.now[now.STOP] !== 0,
         limit,
         limitPct: limit > 0 ? inForce.outMaxPct : inForce.outMinPct,
       });
@@ -308,11 +313,11 @@ export class Simulation implements Run {
     this.print.mixAll(this.printed);
   }
 
-  /** Whether every number of the state that goes into the fingerprint is finite. */
+  /** Whether the states that everything else follows from are finite numbers. */
   private isFinite(): boolean {
-    const {state} = this;
-    let sum = 0;
-    for (let i = PRINTED_FROM; i < PRINTED_TO; i++) sum += state[i]! * 0;
+    const {plantState, controlState} = this;
+    let sum = controlState[control.OUTPUT]! * 0 + controlState[control.INTEGRAL]! * 0;
+    for (let i = 0; i <= place.TENSION; i++) sum += plantState[i]! * 0;
     return sum === 0;
   }
 
@@ -340,9 +345,9 @@ export class Simulation implements Run {
     rows[row + COLUMN.outputPct] = this.controlState[control.OUTPUT]!;
     rows[row + COLUMN.lineMps] = plant.line.speedAt(t);
     rows[row + COLUMN.rollRadps] = p[place.OMEGA]!;
-    rows[row + COLUMN.radiusM] = plant.path.radius();
-    rows[row + COLUMN.slackM] = plant.path.slack();
-    rows[row + COLUMN.torqueNm] = plant.path.torque();
+    rows[row + COLUMN.radiusM] = plant.stand.radius();
+    rows[row + COLUMN.slackM] = plant.stand.slack();
+    rows[row + COLUMN.torqueNm] = plant.stand.torque();
     rows[row + COLUMN.brakeC] = p[place.HEAT]!;
     rows[row + COLUMN.dancerM] = p[place.DANCER]!;
   }
