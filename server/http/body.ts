@@ -56,9 +56,9 @@ function hasBody(req: Request): boolean {
 
 function passThrough(middleware: RequestHandler, req: Request, res: Response): Promise<void> {
   return new Promise((resolve, reject) => {
-    void middleware(req, res, (error?: Error) => {
-      if (error) reject(error);
-      else resolve();
+    void middleware(req, res, (error?: unknown) => {
+      if (error === undefined) resolve();
+      else reject(error instanceof Error ? error : new Error(String(error)));
     });
   });
 }
