@@ -7,8 +7,9 @@ import {setTimeout as sleep} from 'node:timers/promises';
 export function nameOfProcess(pid = process.pid) {
   try {
     const stat = fs.readFileSync(`/proc/${pid}/stat`, 'utf8');
-    // The command in brackets may hold spaces; field 22 is the 20th after it.
-    return `${pid} ${stat.slice(stat.lastIndexOf(')') + 2).split(' ')[19]}`;
+    // The command in brackets may hold blanks; the state comes after it, the start time as 20th.
+    const fields = stat.slice(stat.lastIndexOf(')') + 2).split(' ');
+    return 'ZX'.includes(fields[0]) ? undefined : `${pid} ${fields[19]}`; // ended, only not yet collected
   } catch {
     return undefined; // ENOENT: no such process
   }

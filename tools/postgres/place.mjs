@@ -66,10 +66,7 @@ export function makeFolder(folder, user) {
   try {
     fs.mkdirSync(path.dirname(folder), {recursive: true, mode: 0o755});
     fs.mkdirSync(folder, {recursive: true, mode: 0o700});
-    if (user.uid !== undefined) {
-      fs.chownSync(path.dirname(folder), user.uid, user.gid);
-      fs.chownSync(folder, user.uid, user.gid);
-    }
+    if (user.uid !== undefined) fs.chownSync(folder, user.uid, user.gid);
     fs.accessSync(folder, fs.constants.R_OK | fs.constants.W_OK | fs.constants.X_OK);
   } catch (error) {
     if (error.code !== 'EACCES' && error.code !== 'EPERM') throw error;

@@ -5,6 +5,8 @@ import process from 'node:process';
 import Jasmine from 'jasmine';
 import {ROOT} from '../modules.mjs';
 
+/** A spec may wait for a server to start on a machine that does other things too. */
+const PATIENCE_MS = 60_000;
 const [result, ...globs] = process.argv.slice(2);
 const counts = {passed: 0, failed: 0};
 const runner = new Jasmine({projectBaseDir: ROOT});
@@ -14,6 +16,7 @@ runner.loadConfig({
   env: {random: true, forbidDuplicateNames: false},
 });
 runner.exitOnCompletion = false;
+runner.jasmine.DEFAULT_TIMEOUT_INTERVAL = PATIENCE_MS;
 runner.addReporter({
   specDone({status}) {
     if (status === 'passed') counts.passed++;

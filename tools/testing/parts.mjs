@@ -41,14 +41,18 @@ async function runTypes(result) {
 function runEngineSpecs(result) {
   return runJasmine(result, [
     '{sim-core,shared}/**/*.spec.ts',
-    'tools/**/*.spec.mjs',
+    'tools/**/!(pg).spec.mjs',
     'test/architecture/**/*.spec.ts',
   ]);
 }
 
 function runServerSpecs(result) {
   needPostgres();
-  return runJasmine(result, ['server/**/*.spec.ts', 'test/{contract,support}/**/*.spec.ts']);
+  return runJasmine(result, [
+    'server/**/*.spec.ts',
+    'test/{contract,support}/**/*.spec.ts',
+    'tools/pg.spec.mjs',
+  ]);
 }
 
 async function runJasmine(result, globs) {
