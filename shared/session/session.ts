@@ -33,6 +33,8 @@ export const SessionState = z.strictObject({
       name: z.string(),
       role: z.enum(ROLES),
       organisation: z.string(),
+      /** Known to everybody: the page may fill it in. */
+      password: z.string().optional(),
     }),
   ),
 });
