@@ -94,6 +94,7 @@ export default defineConfig(
         {allowNumber: true, allowBoolean: true},
       ],
       '@typescript-eslint/consistent-type-imports': ['error', {fixStyle: 'inline-type-imports'}],
+      '@typescript-eslint/no-unsafe-class-instance-assignment': 'off', // Material takes its option objects as literals
       '@typescript-eslint/no-extraneous-class': ['error', {allowWithDecorator: true}],
       '@typescript-eslint/no-confusing-void-expression': ['error', {ignoreArrowShorthand: true}],
       '@typescript-eslint/no-unnecessary-condition': [

@@ -1,0 +1,34 @@
+import {provideHttpClient, withInterceptors, withNoXsrfProtection} from '@angular/common/http';
+import {
+  type ApplicationConfig,
+  ErrorHandler,
+  inject,
+  provideAppInitializer,
+  provideBrowserGlobalErrorListeners,
+  provideZonelessChangeDetection,
+} from '@angular/core';
+import {provideRouter, withComponentInputBinding, withInMemoryScrolling} from '@angular/router';
+import {routes} from './app.routes';
+import {ErrorReporter} from './platform/error-reporter';
+import {buildHeader, forgeryToken, signInAgain} from './platform/http-interceptors';
+import {Session} from './session/session';
+
+export const appConfig: ApplicationConfig = {
+  providers: [
+    provideZonelessChangeDetection(),
+    provideBrowserGlobalErrorListeners(),
+    {provide: ErrorHandler, useExisting: ErrorReporter},
+    // The token is read by our own interceptor, anew at each try.
+    provideHttpClient(
+      withNoXsrfProtection(),
+      withInterceptors([buildHeader, signInAgain, forgeryToken]),
+    ),
+    provideRouter(
+      routes,
+      withComponentInputBinding(),
+      withInMemoryScrolling({scrollPositionRestoration: 'enabled'}),
+    ),
+    // Also gives the page its forgery token before the first writing call.
+    provideAppInitializer(() => inject(Session).load()),
+  ],
+};
