@@ -6,6 +6,7 @@ import {settingsOf} from '../scenario/settings';
 import {type Act, type LogEntry} from './log';
 import {type Run} from './run';
 import {Simulation} from './simulation';
+import {type TraceBlock} from './trace';
 
 /** Starts a run of a document from outside. Throws ScenarioError with every fault of it. */
 export function startRun(document: unknown): Run {
@@ -15,21 +16,26 @@ export function startRun(document: unknown): Run {
 /**
  * Runs a document with a log through `throughTick` ticks. The answer can go on: further entries count on
  * from the last. Throws ScenarioError for a gap in n, a falling tick, an entry beyond the end or a value
- * that the live run would have refused.
+ * that the live run would have refused. Rows go into `block` when given.
  */
-export function replay(document: unknown, entries: readonly LogEntry[], throughTick: number): Run {
+export function replay(
+  document: unknown,
+  entries: readonly LogEntry[],
+  throughTick: number,
+  block?: TraceBlock,
+): Run {
   const scenario = readScenario(document);
   const faults = stampFaults(entries, throughTick);
   if (faults.length > 0) throw new ScenarioError(faults);
 
   const run = new Simulation(scenario);
   entries.forEach((entry, place) => {
-    run.advance(entry.tick - run.tick);
+    run.advance(entry.tick - run.tick, block);
     const act = actOf(entry);
     if (act !== null) run.take(act, `entries[${place}]`);
     run.stamp();
   });
-  run.advance(throughTick - run.tick);
+  run.advance(throughTick - run.tick, block);
   return run;
 }
 
