@@ -26,11 +26,10 @@ async function start() {
   if (own) started.push(() => own.stop());
   const env = {
     ...process.env,
-    DATABASE_URL: process.env.DATABASE_URL ?? own.url,
+    ...(own && {DATABASE_URL: own.serverUrl, DATABASE_OWNER_URL: own.url, DEMO: '1'}),
     PORT: String(SERVER_PORT),
     SESSION_SECRET: process.env.SESSION_SECRET ?? sessionSecret(makeRunFolder()),
     PUBLIC_URL: `http://127.0.0.1:${PAGE_PORT}`,
-    DEMO: own ? '1' : '0',
     NODE_ENV: 'development',
     NG_CLI_ANALYTICS: 'false',
   };

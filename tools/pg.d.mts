@@ -1,6 +1,9 @@
 /** A private cluster that runs; see pg.mjs. */
 export interface Postgres {
+  /** As the owner, who is superuser of this cluster. */
   readonly url: string;
+  /** As the server's own user, who owns nothing. */
+  readonly serverUrl: string;
   readonly port: number;
   readonly pid: number;
   readonly dir: string;

@@ -39,7 +39,8 @@ try {
   const url = `http://127.0.0.1:${port}/`;
   const env = {
     ...process.env,
-    DATABASE_URL: postgres.url,
+    DATABASE_URL: postgres.serverUrl,
+    DATABASE_OWNER_URL: postgres.url,
     PORT: String(port),
     SESSION_SECRET: sessionSecret(run),
     NODE_ENV: 'production',

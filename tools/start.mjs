@@ -34,15 +34,14 @@ async function start() {
   await stopLeftovers(run);
 
   const port = await choosePort(process.env.PORT);
-  const database = bringsDatabase ? await ownDatabase() : process.env.DATABASE_URL;
+  const own = bringsDatabase ? await ownDatabase() : {};
   const url = `http://127.0.0.1:${port}/`;
   const env = {
     ...process.env,
-    DATABASE_URL: database,
     PORT: String(port),
     SESSION_SECRET: process.env.SESSION_SECRET ?? sessionSecret(run),
     NODE_ENV: 'production',
-    ...(bringsDatabase ? {DEMO: '1'} : {}),
+    ...own,
   };
   const accounts = bringsDatabase ? await seedOnce(env) : undefined;
   const programs = [];
@@ -66,7 +65,7 @@ async function ownDatabase() {
       fail(`PostgreSQL ended; see ${postgres.dir}/server.log`);
   }, 1_000);
   started.push(() => clearInterval(watch));
-  return postgres.url;
+  return {DATABASE_URL: postgres.serverUrl, DATABASE_OWNER_URL: postgres.url, DEMO: '1'};
 }
 
 function postgresIsInstalled() {
