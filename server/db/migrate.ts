@@ -1,27 +1,43 @@
-import {Client} from 'pg';
+import {type Logger} from 'pino';
+import {JOBS} from '../jobs';
+import {makeQueues} from '../jobs/queues';
 import {makeDataSource} from './data-source';
+import {grantToServer} from './grants';
+import {withLock} from './lock';
 
-/** One number for all instances: who holds it migrates, the others wait. */
-const LOCK = 7_368_211;
+/** Connections for migrating. */
+const POOL_SIZE = 2;
 
 export interface Databases {
   /** The user that owns the tables. */
-  readonly ownerUrl: string;
+  readonly databaseOwnerUrl: string;
+  /** The server's own user. */
+  readonly databaseUrl: string;
 }
 
-/** Brings the database up to this program; two that start at once take turns. */
-export async function migrate({ownerUrl}: Databases): Promise<void> {
-  const holder = new Client({connectionString: ownerUrl});
-  await holder.connect();
+/** Brings the database up to this program, as its owner; two that start at once take turns. */
+export async function migrate(
+  {databaseOwnerUrl, databaseUrl}: Databases,
+  log: Logger,
+): Promise<void> {
+  await withLock(databaseOwnerUrl, 'migrate', async (owner) => {
+    await runMigrations(databaseOwnerUrl, log);
+    await makeQueues(databaseOwnerUrl, JOBS, log);
+    const serverUser = userOf(databaseUrl);
+    if (serverUser !== userOf(databaseOwnerUrl)) await grantToServer(owner, serverUser);
+  });
+}
+
+async function runMigrations(url: string, log: Logger): Promise<void> {
+  const db = await makeDataSource(url, POOL_SIZE).initialize();
   try {
-    await holder.query('select pg_advisory_lock($1)', [LOCK]);
-    const db = await makeDataSource(ownerUrl, 2).initialize();
-    try {
-      await db.runMigrations();
-    } finally {
-      await db.destroy();
-    }
+    const done = await db.runMigrations();
+    for (const {name} of done) log.info({migration: name}, 'migrated');
   } finally {
-    await holder.end(); // frees the lock
+    await db.destroy();
   }
+}
+
+function userOf(url: string): string {
+  return decodeURIComponent(new URL(url).username);
 }

@@ -1,5 +1,6 @@
 import {randomBytes} from 'node:crypto';
 import {Client} from 'pg';
+import {pino} from 'pino';
 import {startPostgres} from '../../tools/pg.mjs';
 import {migrate} from '../db/migrate';
 
@@ -43,7 +44,8 @@ async function makeTemplate(): Promise<{adminUrl: string; name: string}> {
   const adminUrl = given ?? own?.url ?? '';
   const name = `${mark}_template`;
   await ask(adminUrl, `create database ${name}`);
-  await migrate({ownerUrl: urlOf(adminUrl, name)});
+  const url = urlOf(adminUrl, name);
+  await migrate({databaseUrl: url, databaseOwnerUrl: url}, pino({level: 'silent'}));
   jasmine.getEnv().addReporter({
     jasmineDone: async () => {
       await ask(adminUrl, `drop database if exists ${name} with (force)`);
