@@ -6,6 +6,9 @@ import {type Notice} from './notify';
 /** Whether the caller may follow a topic; `id` is what stands behind the colon. */
 export type TopicRule = (caller: Caller, id: string) => Promise<boolean>;
 
+/** A stream ends after this [ms]; the reader comes back, and what it may follow is looked at anew. */
+const LASTS_MS = 15 * 60 * 1000;
+
 interface Follower {
   readonly organisationId: string;
   readonly topics: ReadonlySet<string>;
@@ -27,7 +30,11 @@ export class EventHub {
     for (const topic of topics) await this.check(caller, topic);
     const follower = {organisationId: caller.organisationId, topics: new Set(topics), stream};
     this.followers.add(follower);
-    stream.onClose(() => this.followers.delete(follower));
+    const end = setTimeout(() => stream.end(), LASTS_MS);
+    stream.onClose(() => {
+      clearTimeout(end);
+      this.followers.delete(follower);
+    });
     stream.open();
   }
 
