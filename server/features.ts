@@ -2,6 +2,7 @@ import {type Router} from 'express';
 import {type AppParts} from './app-parts';
 import {eventsFeature} from './features/events/events-feature';
 import {healthFeature} from './features/health/health-feature';
+import {openapiFeature} from './features/openapi/openapi-feature';
 import {peopleFeature} from './features/people/people-feature';
 import {sessionFeature} from './features/session/session-feature';
 import {type Feature} from './feature';
@@ -10,6 +11,7 @@ import {type Feature} from './feature';
 export const FEATURES: readonly Feature[] = [
   eventsFeature,
   healthFeature,
+  openapiFeature,
   peopleFeature,
   sessionFeature,
 ];

@@ -1,4 +1,4 @@
-import {type DataSource, QueryFailedError} from 'typeorm';
+import {type DataSource, type EntityManager, QueryFailedError} from 'typeorm';
 import {type Role} from '#shared/permissions';
 import {type Preferences} from '#shared/session/session';
 import {type Caller} from '../../caller';
@@ -62,23 +62,49 @@ export class PeopleService {
     });
   }
 
-  /** The organisation of this name; made when there is none. */
-  async createOrganisation(name: string, isDemo = false): Promise<string> {
-    const organisations = this.db.getRepository(OrganisationEntity);
+  /** Who has this address, whether signed in or not: for tools and the demo, never for a call. */
+  async findByEmail(email: string): Promise<Caller | undefined> {
+    const person = await this.db.getRepository(PersonEntity).findOneBy({email});
+    return person ? this.findCaller(person.id) : undefined;
+  }
+
+  async findDemoOrganisation(name: string): Promise<string | undefined> {
+    const found = await this.db.getRepository(OrganisationEntity).findOneBy({name, isDemo: true});
+    return found?.id;
+  }
+
+  /** Makes an organisation with its first administrator, or neither. */
+  async foundOrganisation(name: string, administrator: PersonDraft): Promise<void> {
+    await this.db.transaction(async (manager) => {
+      const organisationId = await this.createOrganisation(name, false, manager);
+      await this.createPerson(organisationId, administrator, manager);
+    });
+  }
+
+  async createOrganisation(
+    name: string,
+    isDemo = false,
+    manager: EntityManager = this.db.manager,
+  ): Promise<string> {
     const id = newId();
-    await organisations.insert({id, name, isDemo});
+    await manager.getRepository(OrganisationEntity).insert({id, name, isDemo});
     return id;
   }
 
-  /** Makes a person; nobody's address is told: one that exists is refused as in use. */
-  async createPerson(organisationId: string, draft: PersonDraft): Promise<string> {
-    const {email, name, role, password} = draft;
+  /** Makes a person; an address that exists anywhere is refused as in use. */
+  async createPerson(
+    organisationId: string,
+    draft: PersonDraft,
+    manager: EntityManager = this.db.manager,
+  ): Promise<string> {
+    const {name, role, password} = draft;
+    const email = draft.email.toLowerCase();
     const id = newId();
     const passwordHash = await hashPassword(password);
     try {
-      await this.db
+      await manager
         .getRepository(PersonEntity)
-        .insert({id, organisationId, email: email.toLowerCase(), name, role, passwordHash});
+        .insert({id, organisationId, email, name, role, passwordHash});
     } catch (error) {
       // QueryFailedError: unique_violation of the address
       if (!isTakenAddress(error)) throw error;

@@ -1,4 +1,5 @@
 import {type Me, PersonId, type SessionState} from '#shared/session/session';
+import {DEMO_PASSWORD} from '../people/demo-password';
 import {type PersonEntity} from '../people/person-entity';
 
 export function toMe({id, name, email, role, organisation, preferences}: PersonEntity): Me {
@@ -14,5 +15,5 @@ export function toMe({id, name, email, role, organisation, preferences}: PersonE
 
 export function toDemoAccount(person: PersonEntity): SessionState['demoAccounts'][number] {
   const {email, name, role, organisation} = person;
-  return {email, name, role, organisation: organisation.name};
+  return {email, name, role, organisation: organisation.name, password: DEMO_PASSWORD};
 }

@@ -1,0 +1,5 @@
+import {type DemoStep} from './demo-step';
+import {peopleDemo} from './people';
+
+/** What the demo consists of: one line per feature, in alphabetical order; who needs whom, the steps say. */
+export const DEMO: readonly DemoStep[] = [peopleDemo];
