@@ -1,5 +1,11 @@
 import compression from 'compression';
-import express, {type Express, type Request, Router} from 'express';
+import express, {
+  type Express,
+  type Request,
+  type RequestHandler,
+  type Response,
+  Router,
+} from 'express';
 import {type AppParts} from './app-parts';
 import {PeopleService} from './features/people/people-service';
 import {mountFeatures} from './features';
@@ -29,14 +35,20 @@ export function makeApp(parts: AppParts): App {
   app.use(logCalls(log));
   app.use(securityHeaders(config));
   app.use(compression({filter: isCompressible}));
-  app.use('/api', ...sessions(parts, (id) => people.findCaller(id)), api, noSuchRoute);
+  app.use('/api', neverStored, ...sessions(parts, (id) => people.findCaller(id)), api, noSuchRoute);
   app.use(serveClient(config.clientFolder));
   app.use(answerProblem);
   return {express: app, api};
 }
 
+/** Answers belong to one person at one time. */
+const neverStored: RequestHandler = (req, res, next) => {
+  res.set('Cache-Control', 'no-store');
+  next();
+};
+
 /** Events must reach the reader one by one, not when a block is full. */
-function isCompressible(req: Request, res: express.Response): boolean {
+function isCompressible(req: Request, res: Response): boolean {
   const type = res.getHeader('Content-Type');
   return !String(type).startsWith('text/event-stream') && compression.filter(req, res);
 }

@@ -11,6 +11,9 @@ export interface UploadedFile {
   readonly bytes: Buffer;
 }
 
+/** What body-parser calls a body that is broken, cut off or not as long as it said. */
+const NOT_JSON = new Set(['entity.parse.failed', 'request.size.invalid', 'request.aborted']);
+
 const parseJson = json({limit: MAX_JSON_BYTES, strict: true});
 
 /** Reads the JSON body, where there is one. */
@@ -58,7 +61,10 @@ function passThrough(middleware: RequestHandler, req: Request, res: Response): P
   return new Promise((resolve, reject) => {
     void middleware(req, res, (error?: unknown) => {
       if (error === undefined) resolve();
-      else reject(error instanceof Error ? error : new Error(String(error)));
+      else
+        reject(
+          error instanceof Error ? error : new Error('a body could not be read', {cause: error}),
+        );
     });
   });
 }
@@ -80,7 +86,7 @@ function refusalOf(error: unknown): AppError | undefined {
   if (type === 'encoding.unsupported' || type === 'charset.unsupported') {
     return new AppError('unsupported-media', {detail: (error as Error).message});
   }
-  if (type === 'entity.parse.failed' || type === 'request.size.invalid') {
+  if (typeof type === 'string' && NOT_JSON.has(type)) {
     const errors = [{path: 'body', message: (error as Error).message}];
     return new AppError('invalid-input', {detail: 'The body is not JSON.', errors});
   }

@@ -13,7 +13,12 @@ export function logCalls(logger: Logger): RequestHandler {
       return id;
     },
     serializers: {
-      req: ({id, method, url}: {id: string; method: string; url: string}) => ({id, method, url}),
+      // No headers, and nothing behind the question mark: both may hold secrets.
+      req: ({id, method, url}: {id: string; method: string; url: string}) => ({
+        id,
+        method,
+        path: url.split('?')[0],
+      }),
       res: ({statusCode}: {statusCode: number}) => ({statusCode}),
     },
   });

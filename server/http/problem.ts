@@ -61,9 +61,15 @@ const GONE = /^(08...|53300|57P0.|ECONNREFUSED|ECONNRESET|EPIPE|ETIMEDOUT)$/;
 
 function refusalOf(thrown: unknown): AppError {
   if (thrown instanceof AppError) return thrown;
-  const {code, type, message} = Object(thrown) as Record<string, unknown>;
-  if (type === 'malformed' || thrown instanceof URIError) {
+  const {code, message} = Object(thrown) as Record<string, unknown>;
+  if (thrown instanceof URIError) {
     return new AppError('invalid-input', {errors: [{path: 'path', message: 'Not readable.'}]});
+  }
+  if (code === '22021' || code === '22P05') {
+    // PostgreSQL's text holds every character but U+0000.
+    return new AppError('invalid-input', {
+      detail: 'There is a character in it that cannot be kept.',
+    });
   }
   const isGone =
     (typeof code === 'string' && GONE.test(code)) ||
