@@ -43,14 +43,14 @@ async function start() {
     NODE_ENV: 'production',
     ...own,
   };
-  const accounts = bringsDatabase ? await seedOnce(env) : undefined;
   const programs = [];
   for (const name of ['worker', 'server']) {
     const program = await startProgram(name, {env, run});
     programs.push(program);
     started.push(() => program.stop());
   }
-  await waitUntilReady(url, programs);
+  const seeded = bringsDatabase ? seedOnce(env) : undefined;
+  const [accounts] = await Promise.all([seeded, waitUntilReady(url, programs)]);
   hold.note(url);
   sayReady(url, accounts);
   void Promise.race(programs.map((program) => program.failed)).then((why) => fail(why));

@@ -20,8 +20,16 @@ export function cleanEnvironment(extra = {}) {
 /** Makes the data folder on first use; beside it and then by rename, so that a broken-off one is never taken for whole. */
 export function makeCluster({programs, folder, user, ephemeral, say}) {
   const data = path.join(folder, 'data');
-  const draft = path.join(folder, 'data.new');
-  fs.rmSync(draft, {recursive: true, force: true});
+  // A name of its own: the initdb of a start that was killed may still be writing its own.
+  const draft = path.join(folder, `data.new-${process.pid}`);
+  for (const left of fs.readdirSync(folder).filter((name) => name.startsWith('data.new-'))) {
+    fs.rmSync(path.join(folder, left), {
+      recursive: true,
+      force: true,
+      maxRetries: 20,
+      retryDelay: 100,
+    });
+  }
   if (fs.existsSync(data) && !fs.existsSync(path.join(data, 'global', 'pg_control'))) {
     const aside = path.join(folder, `data.half-made-${Date.now()}`);
     fs.renameSync(data, aside);
