@@ -16,7 +16,7 @@ export function makeLog(level: string, to?: DestinationStream): Logger {
 }
 
 /** An error as it is logged: no parameters of queries, no rows named by the database, which hold what people typed. */
-function describeError(error: unknown): unknown {
+export function describeError(error: unknown): unknown {
   if (!(error instanceof Error)) return {message: String(error)};
   const {code, constraint, query} = error as {
     code?: unknown;

@@ -12,8 +12,8 @@ const USAGE = 'usage: npm run organisation -- create "Name" address';
 
 async function create(name: string, email: string): Promise<void> {
   const own = process.env['DATABASE_URL'] ? undefined : await startPostgres();
-  const url = process.env['DATABASE_URL'] ?? own?.url ?? '';
-  const databaseOwnerUrl = process.env['DATABASE_OWNER_URL'] ?? url;
+  const url = process.env['DATABASE_URL'] ?? own?.serverUrl ?? '';
+  const databaseOwnerUrl = process.env['DATABASE_OWNER_URL'] ?? own?.url ?? url;
   try {
     await migrate({databaseUrl: url, databaseOwnerUrl}, makeLog('error'));
     const db = await makeDataSource(url).initialize();

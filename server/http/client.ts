@@ -33,7 +33,13 @@ function pageOfApp(folder: string): RequestHandler {
     }
     res.set('Cache-Control', 'no-cache');
     res.sendFile('index.html', {root: folder, cacheControl: false}, (error?: Error) => {
-      if (error) next(error);
+      const {code} = Object(error) as {code?: unknown};
+      if (!error || code === 'ECONNABORTED') return; // the reader left
+      next(
+        code === 'ENOENT'
+          ? new AppError('unavailable', {detail: 'The pages are not built.'})
+          : error,
+      );
     });
   };
 }

@@ -1,6 +1,5 @@
 import {createServer, type Server} from 'node:http';
 import {type AddressInfo} from 'node:net';
-import {pino} from 'pino';
 import supertest from 'supertest';
 import {type DataSource} from 'typeorm';
 import {type Role} from '#shared/permissions';
@@ -10,12 +9,15 @@ import {type Caller} from '../caller';
 import {readConfig} from '../config';
 import {makeDataSource} from '../db/data-source';
 import {EventHub} from '../events/event-hub';
+import {Listener} from '../events/listener';
 import {PeopleService} from '../features/people/people-service';
 import {makeJobSender} from '../jobs/boss';
+import {makeLog} from '../log';
 import {makeTestDatabase} from './test-database';
 
 export type Agent = ReturnType<typeof supertest.agent>;
-const PASSWORD = 'a password for tests';
+/** Of every person made here. */
+export const PASSWORD = 'a password for tests';
 
 /** Somebody signed in: `agent` sends the cookie and the token of the session. */
 export interface SignedIn {
@@ -32,6 +34,8 @@ export class TestServer {
     readonly parts: AppParts,
     readonly app: App,
     readonly http: Server,
+    /** What it logged, a JSON line each. */
+    readonly logged: readonly string[],
     /** Stops it and drops the database. */
     readonly close: () => Promise<void>,
   ) {}
@@ -56,18 +60,27 @@ export class TestServer {
     return new PeopleService(this.db).createOrganisation(name);
   }
 
-  /** Makes a person of this role, in a new organisation unless one is given, and signs in. */
-  async signedInAs(role: Role, organisationId?: string): Promise<SignedIn> {
+  /** Makes a person of this role, in a new organisation unless one is given. */
+  async person(role: Role, organisationId?: string): Promise<Omit<SignedIn, 'agent'>> {
     organisationId ??= await this.organisation();
     const email = `${role}-${(this.people += 1)}@people.example`;
     const draft = {email, name: `Sample ${role}`, role, password: PASSWORD};
     const personId = await new PeopleService(this.db).createPerson(organisationId, draft);
+    return {caller: {personId, organisationId, role}, email};
+  }
+
+  /** Signs in with the address of a person made here. */
+  async signIn(email: string): Promise<Agent> {
     const agent = await this.visitor();
-    keepToken(
-      agent,
-      await agent.post('/api/session').send({email, password: PASSWORD}).expect(200),
-    );
-    return {agent, caller: {personId, organisationId, role}, email};
+    const reply = await agent.post('/api/session').send({email, password: PASSWORD}).expect(200);
+    keepToken(agent, reply);
+    return agent;
+  }
+
+  /** Makes a person of this role, in a new organisation unless one is given, and signs in. */
+  async signedInAs(role: Role, organisationId?: string): Promise<SignedIn> {
+    const person = await this.person(role, organisationId);
+    return {...person, agent: await this.signIn(person.email)};
   }
 }
 
@@ -84,31 +97,47 @@ export function useTestServer(settings: Record<string, string> = {}): () => Test
 
 export async function startTestServer(settings: Record<string, string> = {}): Promise<TestServer> {
   const database = await makeTestDatabase();
-  const config = readConfig({
-    DATABASE_URL: database.url,
-    SESSION_SECRET: 'only-for-tests'.repeat(4),
-    NODE_ENV: 'test',
-    LOG_LEVEL: 'silent',
-    ...settings,
-  });
+  const config = readConfig(testSettings(database.url, settings));
+  const logged: string[] = [];
+  const log = makeLog(config.logLevel, {write: (line) => void logged.push(line)});
   const db = await makeDataSource(database.url).initialize();
   const events = new EventHub();
-  const log = pino({level: config.logLevel});
+  const listener = new Listener(database.url, events, log);
+  await listener.start();
   const parts = {config, db, jobs: makeJobSender(), events, log, now: () => new Date()};
   const app = makeApp(parts);
   const http = createServer(app.express);
   await new Promise<void>((resolve) => http.listen(0, '127.0.0.1', resolve));
-  return new TestServer(parts, app, http, async () => {
+  return new TestServer(parts, app, http, logged, async () => {
     events.endAll();
     http.closeAllConnections();
     await new Promise((resolve) => http.close(resolve));
+    await listener.stop();
     await db.destroy();
     await database.drop();
   });
 }
 
-function keepToken(agent: Agent, {headers}: supertest.Response): void {
-  const cookies = headers['set-cookie'] as unknown as string[];
-  const token = cookies.map((cookie) => /^XSRF-TOKEN=([^;]+)/.exec(cookie)?.[1]).find(Boolean);
-  if (token) agent.set('X-XSRF-TOKEN', token);
+/** The environment of a server under test. */
+export function testSettings(
+  databaseUrl: string,
+  settings: Record<string, string> = {},
+): Record<string, string> {
+  return {
+    DATABASE_URL: databaseUrl,
+    SESSION_SECRET: 'only-for-tests'.repeat(4),
+    NODE_ENV: 'test',
+    ...settings,
+  };
+}
+
+/** Sends the session's token with every call from now on, as a page does. */
+export function keepToken(agent: Agent, {headers}: supertest.Response): void {
+  const token = tokenOf(headers);
+  if (token !== undefined) agent.set('X-XSRF-TOKEN', token);
+}
+
+export function tokenOf(headers: Record<string, unknown>): string | undefined {
+  const cookies = (headers['set-cookie'] ?? []) as string[];
+  return cookies.map((cookie) => /^XSRF-TOKEN=([^;]+)/.exec(cookie)?.[1]).find(Boolean);
 }
