@@ -51,6 +51,7 @@ describe('the import table', () => {
     ['shared/runs/run.ts', "import {FIELDS} from '#sim-core/scenario/fields';"],
     ['server/features/a/a-routes.ts', "import {B} from '../b/b-service';"],
     ['src/app/bench/bench-page.ts', "import {X} from '../live-run/frame-loop';"],
+    ['src/app/today/today-page.ts', "import {Session} from '../session/session';"],
     ['src/app/app.routes.ts', "const x = import('./bench/bench-routes');"],
     ['sim-core/plant/roll.spec.ts', "import fc from 'fast-check';"],
   ];

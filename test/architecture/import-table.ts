@@ -14,6 +14,8 @@ const ENGINE_DOORS = ['sim-core/index', 'sim-core/analysis/index'];
 const SHARED_VALUE_DOOR = 'sim-core/scenario/fields';
 /** What lies in src/app beside the features and is there for all of them. */
 const COMMON_ROOMS = ['live-run', 'platform', 'ui'];
+/** Who is signed in: every feature may ask. */
+const SESSION = 'src/app/session/session';
 
 /** Static and dynamic imports and re-exports of a file. */
 export function importsOf(file: string, text?: string): Import[] {
@@ -92,7 +94,9 @@ function betweenClientFeatures(from: string, to: string): string | undefined {
   const own = /^src\/app\/([^/]+)\//.exec(from)?.[1];
   const other = /^src\/app\/([^/]+)\//.exec(to)?.[1];
   if (own === undefined || other === undefined || own === other) return undefined;
-  return COMMON_ROOMS.includes(other) ? undefined : 'a feature imports no other feature';
+  return COMMON_ROOMS.includes(other) || to === SESSION
+    ? undefined
+    : 'a feature imports no other feature';
 }
 
 function target(file: string, specifier: string): {to: string; isPackage: boolean} {
