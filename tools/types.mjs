@@ -24,7 +24,7 @@ async function check(project) {
     : path.join('typescript', 'bin', 'tsc');
   const {code, output} = await watchChild(
     process.execPath,
-    [path.join(ROOT, 'node_modules', compiler), '-p', project, '--noEmit'],
+    [path.join(ROOT, 'node_modules', compiler), '-p', project, '--noEmit', '--rootDir', ROOT],
     {cwd: ROOT},
   );
   console.log(code === 0 ? `ok      ${project}` : `failed  ${project}\n${output.trimEnd()}`);
