@@ -35,7 +35,10 @@ export function makeApp(parts: AppParts): App {
   app.use(logCalls(log));
   app.use(securityHeaders(config));
   app.use(compression({filter: isCompressible}));
-  app.use('/api', neverStored, ...sessions(parts, (id) => people.findCaller(id)), api, noSuchRoute);
+  app.use('/api', neverStored);
+  // Health must answer while the database, and so every session, does not.
+  app.use(/^\/api(?!\/health)/, ...sessions(parts, (id) => people.findCaller(id)));
+  app.use('/api', api, noSuchRoute);
   app.use(serveClient(config.clientFolder));
   app.use(answerProblem);
   return {express: app, api};

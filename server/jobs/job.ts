@@ -21,11 +21,11 @@ export interface Job<D extends z.ZodType = z.ZodType> {
   /** Tries after the first. */
   readonly retryLimit: number;
   /** Does the work; throwing means: try again later. */
-  readonly run: (data: z.output<D>, parts: WorkerParts) => Promise<void>;
+  run(data: z.output<D>, parts: WorkerParts): Promise<void>;
   /** Told once when the last try has failed or died. */
-  readonly givenUp?: (data: z.output<D>, parts: WorkerParts) => Promise<void>;
+  givenUp?(data: z.output<D>, parts: WorkerParts): Promise<void>;
   /** Frees what the job keeps in the worker process: threads. */
-  readonly close?: () => Promise<void>;
+  close?(): Promise<void>;
 }
 
 /** Describes one job, its types tied together. */

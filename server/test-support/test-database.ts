@@ -9,33 +9,32 @@ let template: Promise<{adminUrl: string; name: string}> | undefined;
 const mark = `evenspan_test_${process.pid}_${randomBytes(3).toString('hex')}`;
 let copies = 0;
 
-/** A database of one's own, migrated and empty. */
+/** A database of one's own. */
 export interface TestDatabase {
   readonly url: string;
+  /** Runs SQL as the owner of the cluster, outside this database. */
+  readonly admin: (sql: string) => Promise<void>;
   readonly drop: () => Promise<void>;
 }
 
-export async function makeTestDatabase(): Promise<TestDatabase> {
+/** Migrated, without rows. */
+export function makeTestDatabase(): Promise<TestDatabase> {
+  return makeDatabase(true);
+}
+
+/** Without a single table of ours. */
+export function makeEmptyDatabase(): Promise<TestDatabase> {
+  return makeDatabase(false);
+}
+
+async function makeDatabase(isMigrated: boolean): Promise<TestDatabase> {
   template ??= makeTemplate();
   const {adminUrl, name: source} = await template;
   const name = `${mark}_${(copies += 1)}`;
-  await ask(adminUrl, `create database ${name} template ${source}`);
-  return {
-    url: urlOf(adminUrl, name),
-    drop: () => ask(adminUrl, `drop database if exists ${name} with (force)`),
-  };
-}
-
-/** A database without a single table of ours. */
-export async function makeEmptyDatabase(): Promise<TestDatabase> {
-  template ??= makeTemplate();
-  const {adminUrl} = await template;
-  const name = `${mark}_${(copies += 1)}`;
-  await ask(adminUrl, `create database ${name}`);
-  return {
-    url: urlOf(adminUrl, name),
-    drop: () => ask(adminUrl, `drop database if exists ${name} with (force)`),
-  };
+  const admin = (sql: string): Promise<void> => ask(adminUrl, sql);
+  await admin(`create database ${name} template ${isMigrated ? source : 'template1'}`);
+  const drop = (): Promise<void> => admin(`drop database if exists ${name} with (force)`);
+  return {url: urlOf(adminUrl, name), admin, drop};
 }
 
 async function makeTemplate(): Promise<{adminUrl: string; name: string}> {

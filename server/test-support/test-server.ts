@@ -100,9 +100,9 @@ export async function startTestServer(settings: Record<string, string> = {}): Pr
   const config = readConfig(testSettings(database.url, settings));
   const logged: string[] = [];
   const log = makeLog(config.logLevel, {write: (line) => void logged.push(line)});
-  const db = await makeDataSource(database.url).initialize();
+  const db = await makeDataSource(config.databaseUrl).initialize();
   const events = new EventHub();
-  const listener = new Listener(database.url, events, log);
+  const listener = new Listener(config.databaseUrl, events, log);
   await listener.start();
   const parts = {config, db, jobs: makeJobSender(), events, log, now: () => new Date()};
   const app = makeApp(parts);
