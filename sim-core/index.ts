@@ -11,3 +11,10 @@ export {readScenario, scenarioFaults, tickOf, withDefaults} from './scenario/rea
 export * from './scenario/scenario';
 export {type Settings, settingsOf} from './scenario/settings';
 export * from './scoring/criteria';
+export * from './measures/band';
+export * from './measures/extremes';
+export * from './measures/output';
+export * from './measures/rest';
+export * from './measures/rows';
+export * from './measures/slack';
+export * from './measures/step';

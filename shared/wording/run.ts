@@ -1,0 +1,56 @@
+import {type LogEntry, type Phase, type RunEvent} from '#sim-core/index';
+import {type UnitSystem, written} from '../units';
+import {settingName, settingValue} from './settings';
+
+const PHASE_WORDS: Readonly<Record<Phase, string>> = {
+  standstill: 'standstill',
+  starting: 'starting',
+  running: 'running',
+  stopping: 'stopping',
+  manual: 'manual',
+};
+
+/** A phase as it is called on the screen. */
+export function phaseWord(phase: Phase): string {
+  return PHASE_WORDS[phase];
+}
+
+/** What somebody did, in a few words for a mark on a trend; null for what needs no mark. */
+export function entryWords(entry: LogEntry, units: UnitSystem): string | null {
+  switch (entry.kind) {
+    case 'line':
+      if (entry.line.command === 'run')
+        return `run ${written('speed', entry.line.speedMps, units)}`;
+      return entry.line.command === 'stop' ? 'stop' : 'fast stop';
+    case 'set':
+      return Object.entries(entry.set)
+        .map(([key, value]) => `${settingName(key)} ${settingValue(key, value, units)}`)
+        .join(', ');
+    case 'disturb':
+      return 'upset';
+    default:
+      return null;
+  }
+}
+
+/** What happened by itself, in a few words; null for what needs no mark. */
+export function eventWords(event: RunEvent, units: UnitSystem): string | null {
+  switch (event.kind) {
+    case 'slackBegan':
+      return 'web slack';
+    case 'stretched':
+      return 'web stretched';
+    case 'brakeHot':
+      return 'brake over its limit';
+    case 'dancerStop':
+      return 'dancer at a stop';
+    case 'webBroke':
+      return event.value === undefined
+        ? 'web broke'
+        : `web broke at ${written('tension', event.value, units)}`;
+    case 'rollEmpty':
+      return 'roll empty';
+    default:
+      return null;
+  }
+}
