@@ -58,15 +58,20 @@ export async function startChild(program, words, {cwd, env, log}) {
   return {pid: child.pid, ended, stop: (waitMs) => stopGroup(child.pid, ended, waitMs)};
 }
 
-/** Asks by SIGTERM, insists by SIGKILL after `waitMs`. */
+/** Asks the program by SIGTERM, insists by SIGKILL after `waitMs`; its own children end with it. */
 async function stopGroup(pid, ended, waitMs = 15_000) {
   if (pid === undefined) return;
-  signalGroup(pid, 'SIGTERM');
+  try {
+    process.kill(pid, 'SIGTERM'); // not its group: it ends its children itself, in its order
+  } catch {
+    // ESRCH: it has ended
+  }
   const late = Symbol('late');
   if ((await Promise.race([ended, sleep(waitMs, late, {ref: false})])) === late) {
     signalGroup(pid, 'SIGKILL');
     await ended;
   }
+  signalGroup(pid, 'SIGKILL'); // what it left
 }
 
 /** Sends a signal to a process group that `startChild` made; harmless when it has ended. */

@@ -19,6 +19,7 @@ async function main() {
   if (dirty) console.log('Changes that are not committed are not tested.');
 
   const folder = fs.mkdtempSync(path.join(os.tmpdir(), 'evenspan-fresh-'));
+  fs.chmodSync(folder, 0o755); // ordinary users live in it too
   try {
     await makeDebian(folder);
     const inside = path.join(ROOT, 'tools', 'fresh', 'inside.mjs');
