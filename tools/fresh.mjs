@@ -26,13 +26,15 @@ async function main() {
     const {code} = await watchChild('unshare', [...NAMESPACES, process.execPath, inside, folder], {
       show: true,
     });
-    return code;
+    return code ?? 1; // null when it was killed
   } finally {
     fs.rmSync(folder, {recursive: true, force: true});
   }
 }
 
-for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => endChildren());
+// unshare lets no gentler signal through.
+for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'])
+  process.on(signal, () => endChildren('SIGKILL'));
 process.exitCode = await main().catch((error) => {
   console.error(error.message);
   console.log('0 passed, 1 failed');
