@@ -1,0 +1,82 @@
+import {type Scenario, SCENARIO_FORMAT} from '#sim-core/index';
+
+/** A stand to begin with. */
+export interface SetUp {
+  readonly key: string;
+  readonly title: string;
+  readonly summary: string;
+  /** Roll radii behind the presses [m]. */
+  readonly radii: {readonly small: number; readonly half: number; readonly full: number};
+  readonly scenario: Scenario;
+}
+
+/**
+ * An invented paper coater. Data: common practice, no source. It starts at its own equilibrium: the holding
+ * brake holds the initial tension at rest (150 N × 0.5 m = 75 N·m, which 30 % of the brake gives).
+ */
+export const COATER_1: SetUp = {
+  key: 'coater-1',
+  title: 'Coater 1, unwind',
+  summary: '100 µm paper, 1.0 m wide, powder brake, load cell',
+  radii: {small: 0.1, half: 0.25, full: 0.5},
+  scenario: {
+    format: SCENARIO_FORMAT,
+    name: 'Coater 1',
+    durationS: 3600,
+    seed: 1,
+    initialTensionN: 150,
+    lineRoundS: 1,
+    web: {
+      widthM: 1,
+      thicknessM: 100e-6,
+      modulusPa: 4e9,
+      densityKgM3: 800,
+      breakNPerM: 1200,
+      lossTimeS: 0.005,
+    },
+    roll: {
+      coreRadiusM: 0.05,
+      radiusM: 0.5,
+      coreInertiaKgM2: 0.4,
+      woundTensionN: 100,
+      coulombNm: 0.5,
+      viscousNmS: 0.05,
+    },
+    span: {lengthM: 2, idlerDragN: 4},
+    brake: {
+      maxTorqueNm: 250,
+      residualTorqueNm: 1.5,
+      lagS: 0.2,
+      deadTimeS: 0.03,
+      capacityJPerK: 5000,
+      conductanceWPerK: 6.67,
+    },
+    sensing: {kind: 'loadCell', rangeN: 500, filterS: 0.1, noiseN: 0.5},
+    controller: {
+      kp: 0.1,
+      tiS: 0.5,
+      setPointN: 200,
+      startRampS: 4,
+      startFraction: 0.7,
+      standstillPct: 30,
+      stopHoldS: 6,
+      stopHoldGain: 1,
+      radiusRefM: 0.5,
+    },
+    line: [],
+    actions: [],
+  },
+};
+
+/** The stand with a roll of another radius, its holding brake set so that it holds the same tension at rest. */
+export function withRadius(scenario: Scenario, radiusM: number): Scenario {
+  const {brake, controller, initialTensionN} = scenario;
+  const residualNm = brake.residualTorqueNm ?? 0;
+  const share = (initialTensionN * radiusM - residualNm) / (brake.maxTorqueNm - residualNm);
+  const standstillPct = Math.round(Math.min(100, Math.max(0, 100 * share)));
+  return {
+    ...scenario,
+    roll: {...scenario.roll, radiusM},
+    controller: {...controller, standstillPct},
+  };
+}

@@ -1,0 +1,69 @@
+import {ChangeDetectionStrategy, Component, computed, input} from '@angular/core';
+import {type UnitSystem} from '#shared/units';
+import {entryWords} from '#shared/wording/run';
+import {type LiveRun} from '../live-run';
+import {figuresOf, lastAct, type Yardstick} from './figures-of';
+
+/** The numbers beside a trend, since the last act. */
+@Component({
+  selector: 'app-figures',
+  template: `
+    <h3>{{ title() }}</h3>
+    <dl>
+      @for (figure of figures(); track figure.name) {
+        <div [class.out]="figure.isOut">
+          <dt>{{ figure.name }}</dt>
+          <dd>
+            <span class="number">{{ figure.number }}</span>
+            <span class="muted">{{ figure.unit }}</span>
+          </dd>
+        </div>
+      }
+    </dl>
+  `,
+  styles: `
+    h3 {
+      color: var(--muted);
+      font-size: 0.9rem;
+      font-weight: 400;
+    }
+    dl {
+      display: grid;
+      grid-template-columns: repeat(auto-fill, minmax(7.5rem, 1fr));
+      gap: 0.6rem 1rem;
+      margin: 0.4rem 0 0;
+      padding-top: 0.6rem;
+      border-top: 1px solid var(--rule);
+    }
+    dt {
+      font-size: 0.85rem;
+    }
+    dd {
+      margin: 0;
+    }
+    .number {
+      font-size: 1.1rem;
+      font-weight: 600;
+    }
+    .out .number {
+      color: var(--vermilion);
+    }
+  `,
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class Figures {
+  readonly run = input.required<LiveRun>();
+  readonly yardstick = input.required<Yardstick>();
+  readonly units = input<UnitSystem>('si');
+
+  private readonly since = computed(() => lastAct(this.run().entries()));
+  protected readonly figures = computed(() => {
+    this.run().readOuts(); // five times a second
+    return figuresOf(this.run().trace, this.since(), this.yardstick(), this.units());
+  });
+  protected readonly title = computed(() => {
+    const since = this.since();
+    if (since === null) return 'Figures since the beginning';
+    return `Figures since “${entryWords(since, this.units()) ?? ''}” at ${(since.tick * 0.01).toFixed(1)} s`;
+  });
+}
