@@ -3,7 +3,7 @@ import {makeDataSource} from '../db/data-source';
 import {startWorker} from '../jobs/worker';
 import {makeLog} from '../log';
 import {runner, slowJob} from './slow-job';
-import {testSettings} from './test-server';
+import {testSettings} from './test-settings';
 
 const UPKEEP_S = 1;
 

@@ -4,6 +4,9 @@ import {pino} from 'pino';
 import {startPostgres} from '../../tools/pg.mjs';
 import {migrate} from '../db/migrate';
 
+// The first database of a run waits for a cluster to be made, on a machine that others use too.
+jasmine.DEFAULT_TIMEOUT_INTERVAL = 60_000;
+
 /** The template is made and migrated once per process; every spec file gets a copy. */
 let template: Promise<{adminUrl: string; name: string}> | undefined;
 const mark = `evenspan_test_${process.pid}_${randomBytes(3).toString('hex')}`;

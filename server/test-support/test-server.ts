@@ -11,9 +11,11 @@ import {makeDataSource} from '../db/data-source';
 import {EventHub} from '../events/event-hub';
 import {Listener} from '../events/listener';
 import {PeopleService} from '../features/people/people-service';
+import {closeServer} from '../http/close-server';
 import {makeJobSender} from '../jobs/boss';
 import {makeLog} from '../log';
 import {makeTestDatabase} from './test-database';
+import {testSettings} from './test-settings';
 
 export type Agent = ReturnType<typeof supertest.agent>;
 /** Of every person made here. */
@@ -24,6 +26,8 @@ export interface SignedIn {
   readonly agent: Agent;
   readonly caller: Caller;
   readonly email: string;
+  /** The session's cookie, for calls that do not go through the agent. */
+  readonly cookie: string;
 }
 
 /** A server on loopback with a database of its own. */
@@ -61,7 +65,7 @@ export class TestServer {
   }
 
   /** Makes a person of this role, in a new organisation unless one is given. */
-  async person(role: Role, organisationId?: string): Promise<Omit<SignedIn, 'agent'>> {
+  async person(role: Role, organisationId?: string): Promise<Omit<SignedIn, 'agent' | 'cookie'>> {
     organisationId ??= await this.organisation();
     const email = `${role}-${(this.people += 1)}@people.example`;
     const draft = {email, name: `Sample ${role}`, role, password: PASSWORD};
@@ -70,17 +74,17 @@ export class TestServer {
   }
 
   /** Signs in with the address of a person made here. */
-  async signIn(email: string): Promise<Agent> {
+  async signIn(email: string): Promise<Pick<SignedIn, 'agent' | 'cookie'>> {
     const agent = await this.visitor();
     const reply = await agent.post('/api/session').send({email, password: PASSWORD}).expect(200);
     keepToken(agent, reply);
-    return agent;
+    return {agent, cookie: sessionCookieOf(reply)};
   }
 
   /** Makes a person of this role, in a new organisation unless one is given, and signs in. */
   async signedInAs(role: Role, organisationId?: string): Promise<SignedIn> {
     const person = await this.person(role, organisationId);
-    return {...person, agent: await this.signIn(person.email)};
+    return {...person, ...(await this.signIn(person.email))};
   }
 }
 
@@ -109,32 +113,24 @@ export async function startTestServer(settings: Record<string, string> = {}): Pr
   const http = createServer(app.express);
   await new Promise<void>((resolve) => http.listen(0, '127.0.0.1', resolve));
   return new TestServer(parts, app, http, logged, async () => {
-    events.endAll();
-    http.closeAllConnections();
-    await new Promise((resolve) => http.close(resolve));
+    await closeServer(http, events);
     await listener.stop();
     await db.destroy();
     await database.drop();
   });
 }
 
-/** The environment of a server under test. */
-export function testSettings(
-  databaseUrl: string,
-  settings: Record<string, string> = {},
-): Record<string, string> {
-  return {
-    DATABASE_URL: databaseUrl,
-    SESSION_SECRET: 'only-for-tests'.repeat(4),
-    NODE_ENV: 'test',
-    ...settings,
-  };
-}
-
 /** Sends the session's token with every call from now on, as a page does. */
 export function keepToken(agent: Agent, {headers}: supertest.Response): void {
   const token = tokenOf(headers);
   if (token !== undefined) agent.set('X-XSRF-TOKEN', token);
+}
+
+function sessionCookieOf({headers}: supertest.Response): string {
+  const cookies = headers['set-cookie'] as unknown as string[];
+  const cookie = cookies.find((each) => each.startsWith('evenspan-session='));
+  if (cookie === undefined) throw new Error('the reply sets no session cookie');
+  return cookie.split(';')[0] ?? '';
 }
 
 export function tokenOf(headers: Record<string, unknown>): string | undefined {
