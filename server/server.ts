@@ -8,10 +8,8 @@ import {makeDataSource} from './db/data-source';
 import {migrate} from './db/migrate';
 import {EventHub} from './events/event-hub';
 import {Listener} from './events/listener';
+import {closeServer} from './http/close-server';
 import {makeJobSender} from './jobs/boss';
-
-/** Calls in flight at a shutdown may end within this [ms]. */
-const END_WITHIN_MS = 10_000;
 
 /** A server that listens. */
 export interface RunningServer {
@@ -37,7 +35,7 @@ export async function startServer(config: Config, log: Logger): Promise<RunningS
   return {
     url: `http://${config.host}:${port}`,
     stop: async () => {
-      await close(http, events);
+      await closeServer(http, events);
       await listener.stop();
       await db.destroy();
     },
@@ -49,13 +47,4 @@ function listen(http: Server, {host, port}: Config): Promise<void> {
     http.once('error', reject);
     http.listen(port, host, resolve);
   });
-}
-
-async function close(http: Server, events: EventHub): Promise<void> {
-  const closed = new Promise<void>((resolve) => http.close(() => resolve()));
-  events.endAll(); // else the server never closes
-  http.closeIdleConnections();
-  const late = setTimeout(() => http.closeAllConnections(), END_WITHIN_MS);
-  await closed;
-  clearTimeout(late);
 }

@@ -37,7 +37,7 @@ export const answerProblem: ErrorRequestHandler = (thrown: unknown, req, res, ne
     req.log.error({err: thrown}, 'call failed');
   }
   if (res.headersSent) {
-    next(thrown); // Express cuts the connection: half an answer must not look like a whole one
+    next(); // Express cuts the connection: half an answer must not look like a whole one
     return;
   }
   const {code, details} = refusal;

@@ -156,17 +156,16 @@ describe('the session', () => {
 
     it('with nobody after sign-out, and the old cookie opens nothing', async () => {
       const {email} = await server().person('trainee');
-      const agent = await server().signIn(email);
-      const {body: signedIn} = await agent.get('/api/session');
-      const kept = await agent.get('/api/session');
-      const cookie = kept.request.getHeader('Cookie');
+      const {agent, cookie} = await server().signIn(email);
+      const withCookie = () => supertest(server().http).get('/api/session').set('Cookie', cookie);
+      const before = await withCookie();
 
       const {body} = await agent.delete('/api/session').expect(200);
-      const old = await supertest(server().http).get('/api/session').set('Cookie', cookie);
+      const after = await withCookie();
 
-      expect(signedIn.me.email).toBe(email);
+      expect(before.body.me.email).toBe(email);
       expect(body.me).toBeNull();
-      expect(old.body.me).toBeNull();
+      expect(after.body.me).toBeNull();
     });
 
     it('by the role that the database holds now', async () => {
