@@ -202,6 +202,7 @@ export default defineConfig(
     rules: {
       ...restrict(onlyTheDoor, outOf(['server', 'test'], 'The client never imports the server.')),
       '@angular-eslint/prefer-on-push-component-change-detection': 'error',
+      '@typescript-eslint/no-unsafe-enum-assignment': 'off', // uPlot's enums exist as types only
     },
   },
   {

@@ -18,3 +18,5 @@ export * from './measures/rest';
 export * from './measures/rows';
 export * from './measures/slack';
 export * from './measures/step';
+export * from './scoring/score';
+export {commandsOf, type GivenCommand, type RunFacts} from './scoring/windows';

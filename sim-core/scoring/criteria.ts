@@ -1,5 +1,14 @@
 import {type TrendPlace} from '../run/log';
 import {type Phase} from '../run/trace';
+import {type Scenario} from '../scenario/scenario';
+
+/** What an attempt is scored by; the parts of an exercise that scoring needs. */
+export interface Scored {
+  readonly scenario: Scenario;
+  readonly target: Target;
+  readonly criteria: readonly Criterion[];
+  readonly passMark: number;
+}
 
 /** What an exercise asks of the web, fixed whatever set point is entered. */
 export interface Target {
@@ -30,6 +39,8 @@ export type Window =
       };
       /** End: the next line command of any kind, or this many seconds, whichever is first. */
       readonly forS?: number;
+      /** A shorter window says nothing: counts as not done. A break may end it sooner. */
+      readonly atLeastS?: number;
     };
 
 export type MeasureName = 'peakN' | 'leastN' | 'loopM' | 'restN' | 'inToleranceShare';

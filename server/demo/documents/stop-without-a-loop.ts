@@ -51,11 +51,11 @@ const scenario: Scenario = {
 
 /** The last stop from job speed is the one that is marked. */
 const lastStop = {command: 'stop', nth: -1, fromSpeedMps: 1.95} as const;
-/** Stop ramp 4 s, rounding 1 s, 3 s more: what the stop itself does to the web. */
+/** Stop ramp 3 s, rounding 1 s, 3 s more, and one to spare: what the stop itself does to the web. */
 const stopping = {kind: 'commands', from: lastStop, forS: 8, atLeastS: 8} as const;
 /** Until the next command: a loop may also form late, or stay. */
 const untilRestart = {kind: 'commands', from: lastStop, atLeastS: 8} as const;
-/** Start ramp 8 s, rounding 1 s, 3 s more. */
+/** Start ramp 7 s, rounding 1 s, 3 s more, and one to spare. */
 const restarting = {
   kind: 'commands',
   from: lastStop,
@@ -67,13 +67,18 @@ const restarting = {
 const criteria: Criterion[] = [
   {kind: 'measure', measure: 'loopM', window: untilRestart, full: 0.005, zero: 0.05, weight: 30},
   {kind: 'measure', measure: 'leastN', window: stopping, full: 50, zero: 10, weight: 25},
-  {kind: 'measure', measure: 'peakN', window: stopping, full: 280, zero: 340, weight: 25},
-  {kind: 'measure', measure: 'peakN', window: restarting, full: 215, zero: 300, weight: 20},
+  {kind: 'measure', measure: 'peakN', window: stopping, full: 280, zero: 335, weight: 25},
+  {kind: 'measure', measure: 'peakN', window: restarting, full: 215, zero: 285, weight: 20},
   {kind: 'mustNot', measure: 'peakN', window: stopping, limit: 600},
   {kind: 'mustNot', measure: 'peakN', window: restarting, limit: 600},
 ];
 
-/** Exercise 10 of the library. Lesson: enough brake to keep the web taut, gone before the next start. */
+/**
+ * Exercise 10 of the library. Lesson: enough brake to keep the web taut, gone before the next start. Ramps are
+ * 3 and 7 s plus 1 s of rounding: the line stops in 4 s and starts in 8. Run on the engine (boost × / boost time
+ * → loop, least, peak, restart peak): 1.0/6 s 128 mm, 0 N, 200 N, 2367 N; 1.4/5 s none, 58, 264, 200;
+ * 1.8/6 s none, 128, 341, 200; 1.4/18 s none, 58, 264, 291; 1.4/2.5 s 58 mm, 0, 238, 1638.
+ */
 export const STOP_WITHOUT_A_LOOP: Exercise = {
   format: 'evenspan.exercise/1',
   number: 10,

@@ -1,0 +1,20 @@
+/** Cautions by their number in the handbook's list, in our own words. */
+export const CAUTIONS: Readonly<Record<number, string>> = {
+  1: 'This is a model. What you find here does not release a real machine.',
+  2: 'Before you touch a real stand, isolate every source of energy by the site’s procedure, and check it.',
+  3: 'A turning roll draws things in and does not stop at once. Stay outside; keep guards closed.',
+  4: 'Never tune with people in the danger zone. Only one person gives commands.',
+  5: 'Test the emergency stop before anything moves. It is no way to stop a line every day.',
+  6: 'An emergency stop of a heavy roll can ask more than the brake has. The web may go slack or break.',
+  7: 'Never pass the tension limits of web, rollers, shafts, chucks or load cells.',
+  8: 'Begin with low gain and output by hand. Never look for the limit gain on a real web.',
+  9: 'A full roll and a nearly empty one are two plants. Prove both.',
+  10: 'A brake gets hot enough to burn you, and weaker as it does.',
+  11: 'Lifting and chucking rolls has dangers of its own. This program does not cover them.',
+  12: 'Film can carry static charge that sparks. Site rules come first.',
+  13: 'After a web break wait until everything stands. Edges are sharp and loose ends fly.',
+  14: 'Power that comes back can start a machine. Isolate it before you thread by hand.',
+  15: 'A sensor the wrong way round drives the brake to its limit. Keep a hand at the stop.',
+  16: 'Safety belongs to the machine’s safety system, not to a tension controller and not to this program.',
+  17: 'Figures marked “from memory” must not size anything without data of the real parts.',
+};
