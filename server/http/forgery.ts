@@ -17,6 +17,11 @@ export function giveToken(req: Request, res: Response): void {
   res.cookie(TOKEN_COOKIE, req.session.forgeryToken, options);
 }
 
+/** A page whose session has ended still holds its token; it gets a new one, since its next call is the sign-in. */
+export function renewToken(req: Request, res: Response): void {
+  if (req.headers.cookie?.includes(`${TOKEN_COOKIE}=`)) giveToken(req, res);
+}
+
 /** Refuses a writing call that does not carry the session's token: another site's page cannot know it. */
 export function checkForgery(req: Request, res: Response): void {
   if (READING.has(req.method)) return;

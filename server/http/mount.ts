@@ -52,7 +52,7 @@ export function mount(
   if (endpoint.access === 'public') throw new Error(`${endpoint.path} is public: use mountPublic`);
   const run = handler as (input: unknown, caller: Caller, extra?: unknown) => Promise<unknown>;
   register(router, endpoint, async (req, res) => {
-    const caller = checkAccess(req, endpoint.access);
+    const caller = checkAccess(req, res, endpoint.access);
     await serve(endpoint, req, res, (input, extra) => run(input, caller, extra));
   });
 }

@@ -147,6 +147,22 @@ describe('the session', () => {
         .expect(200);
     });
 
+    it('with a token for the sign-in to a page whose session has ended', async () => {
+      const {agent, email, caller} = await server().signedInAs('trainee');
+      await server().db.query("delete from session where sess->'passport'->>'user' = $1", [
+        caller.personId,
+      ]);
+
+      const ended = await agent.put('/api/session/preferences').send({}).expect(401);
+      const again = await agent
+        .post('/api/session')
+        .set('X-XSRF-TOKEN', tokenOf(ended.headers) ?? '')
+        .send({email, password: PASSWORD})
+        .expect(200);
+
+      expect(again.body.me.email).toBe(email);
+    });
+
     it('with cookies that scripts cannot read but for the token', async () => {
       const reply = await supertest(server().http).get('/api/session').expect(200);
 
@@ -196,22 +212,22 @@ describe('the session', () => {
   it('takes as long over an unknown address as over a known one', async () => {
     const {email} = await server().person('trainee');
     const people = new PeopleService(server().db);
-    const timeOf = async (address: string): Promise<number> => {
-      const times = [];
-      for (let n = 0; n < 9; n++) {
+    const times: Record<string, number[]> = {};
+    for (let n = 0; n < 15; n++) {
+      for (const address of [email, 'unknown@people.example']) {
         const began = performance.now();
         await people.findBySignIn(address, 'wrong');
-        times.push(performance.now() - began);
+        (times[address] ??= []).push(performance.now() - began);
       }
-      return times.sort((a, b) => a - b)[4] ?? NaN; // median
-    };
-    await timeOf('warm@people.example');
-
-    const ratio = (await timeOf('unknown@people.example')) / (await timeOf(email));
+    }
+    const [known = NaN, unknown = NaN] = Object.values(times).map(
+      (each) => each.sort((a, b) => a - b)[7], // median
+    );
+    const ratio = unknown / known;
 
     // Without the stand-in hash it would be about 1/10: one query instead of a query and a hash.
-    expect(ratio).toBeGreaterThan(0.5);
-    expect(ratio).toBeLessThan(2);
+    expect(ratio).toBeGreaterThan(0.4);
+    expect(ratio).toBeLessThan(2.5);
   });
 });
 
