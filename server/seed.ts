@@ -21,8 +21,7 @@ async function seed(): Promise<string> {
     );
     const accounts = await new PeopleService(db).listDemoAccounts();
     const lines = accounts.map(
-      ({email, role, organisation}) =>
-        `  ${email.padEnd(34)} ${role.padEnd(14)} ${organisation.name}`,
+      ({email, role, organisation}) => `  ${email.padEnd(34)} ${role.padEnd(14)} ${organisation}`,
     );
     return [...lines, `  Password of all: ${DEMO_PASSWORD}`].join('\n');
   } finally {

@@ -67,7 +67,7 @@ describe('people', () => {
 
     expect([await count('organisation'), await count('person')]).toEqual(once);
     const accounts = await people().listDemoAccounts();
-    const firms = new Set(accounts.map(({organisation}) => organisation.name));
+    const firms = new Set(accounts.map(({organisation}) => organisation));
     expect([...firms]).toEqual(['Harrow Lane Converting', 'Tarn Mill Nonwovens']);
     expect(new Set(accounts.map(({role}) => role)).size).toBe(4);
   });

@@ -1,12 +1,13 @@
 import {type DataSource, type EntityManager, QueryFailedError} from 'typeorm';
 import {type Role} from '#shared/permissions';
-import {type Preferences} from '#shared/session/session';
+import {type Me, type Preferences} from '#shared/session/session';
 import {type Caller} from '../../caller';
 import {newId} from '../../db/new-id';
 import {AppError} from '../../errors';
 import {OrganisationEntity} from './organisation-entity';
 import {hashPassword, isPasswordOf} from './password';
 import {PersonEntity} from './person-entity';
+import {type DemoAccount, toCaller, toDemoAccount, toMe} from './person-mapper';
 
 /** A person about to be made. */
 export interface PersonDraft {
@@ -21,10 +22,10 @@ export class PeopleService {
   constructor(private readonly db: DataSource) {}
 
   /** The person with this address and password; who has left is refused like a stranger. */
-  async findBySignIn(email: string, password: string): Promise<PersonEntity | undefined> {
+  async findBySignIn(email: string, password: string): Promise<Caller | undefined> {
     const person = await this.db.getRepository(PersonEntity).findOneBy({email, active: true});
     const isRight = await isPasswordOf(person?.passwordHash, password);
-    return person && isRight ? person : undefined;
+    return person && isRight ? toCaller(person) : undefined;
   }
 
   /** The caller a session belongs to, as things are now; nobody once the person has left. */
@@ -33,33 +34,33 @@ export class PeopleService {
       select: {id: true, organisationId: true, role: true},
       where: {id: personId, active: true},
     });
-    if (!person) return undefined;
-    return {personId: person.id, organisationId: person.organisationId, role: person.role};
+    return person ? toCaller(person) : undefined;
   }
 
-  /** The caller's own row, with the organisation. */
-  async getSelf(caller: Caller): Promise<PersonEntity> {
+  /** The caller, as the caller's own page shows it. */
+  async getSelf(caller: Caller): Promise<Me> {
     const {personId: id, organisationId} = caller;
     const person = await this.db
       .getRepository(PersonEntity)
       .findOne({where: {id, organisationId}, relations: {organisation: true}});
     if (!person) throw new AppError('not-signed-in');
-    return person;
+    return toMe(person);
   }
 
-  async updatePreferences(caller: Caller, preferences: Preferences): Promise<PersonEntity> {
+  async updatePreferences(caller: Caller, preferences: Preferences): Promise<Me> {
     const {personId: id, organisationId} = caller;
     await this.db.getRepository(PersonEntity).update({id, organisationId}, {preferences});
     return this.getSelf(caller);
   }
 
   /** Accounts of the demo organisations, for the sign-in page of a demo. */
-  listDemoAccounts(): Promise<PersonEntity[]> {
-    return this.db.getRepository(PersonEntity).find({
+  async listDemoAccounts(): Promise<DemoAccount[]> {
+    const people = await this.db.getRepository(PersonEntity).find({
       where: {organisation: {isDemo: true}, active: true},
       relations: {organisation: true},
       order: {createdAt: 'asc', id: 'asc'},
     });
+    return people.map(toDemoAccount);
   }
 
   /** Who has this address, whether signed in or not: for tools and the demo, never for a call. */

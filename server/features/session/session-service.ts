@@ -7,7 +7,6 @@ import {
 import {type Caller} from '../../caller';
 import {AppError} from '../../errors';
 import {type PeopleService} from '../people/people-service';
-import {toDemoAccount, toMe} from './session-mapper';
 import {type SignInLimit} from './sign-in-limit';
 
 /** Who is signed in. */
@@ -19,23 +18,23 @@ export class SessionService {
   ) {}
 
   async describe(caller: Caller | undefined): Promise<SessionState> {
-    const me = caller ? toMe(await this.people.getSelf(caller)) : null;
-    const accounts = this.showsDemo ? await this.people.listDemoAccounts() : [];
-    return {me, demoAccounts: accounts.map(toDemoAccount)};
+    const me = caller ? await this.people.getSelf(caller) : null;
+    const demoAccounts = this.showsDemo ? await this.people.listDemoAccounts() : [];
+    return {me, demoAccounts};
   }
 
   /** The person with this address and password; says the same to a wrong password and an unknown address. */
   async signIn({email, password}: SignInDraft, networkAddress: string): Promise<Caller> {
     await this.limit.spend(networkAddress, email);
-    const person = await this.people.findBySignIn(email, password);
-    if (!person) {
+    const caller = await this.people.findBySignIn(email, password);
+    if (!caller) {
       throw new AppError('invalid-input', {detail: 'E-mail address or password is not right.'});
     }
     await this.limit.forgive(networkAddress, email);
-    return {personId: person.id, organisationId: person.organisationId, role: person.role};
+    return caller;
   }
 
-  async updatePreferences(caller: Caller, preferences: Preferences): Promise<Me> {
-    return toMe(await this.people.updatePreferences(caller, preferences));
+  updatePreferences(caller: Caller, preferences: Preferences): Promise<Me> {
+    return this.people.updatePreferences(caller, preferences);
   }
 }

@@ -1,6 +1,14 @@
 import {type Me, PersonId, type SessionState} from '#shared/session/session';
-import {DEMO_PASSWORD} from '../people/demo-password';
-import {type PersonEntity} from '../people/person-entity';
+import {type Caller} from '../../caller';
+import {DEMO_PASSWORD} from './demo-password';
+import {type PersonEntity} from './person-entity';
+
+/** An account to try, as the sign-in page of a demo shows it. */
+export type DemoAccount = SessionState['demoAccounts'][number];
+
+export function toCaller({id, organisationId, role}: PersonEntity): Caller {
+  return {personId: id, organisationId, role};
+}
 
 export function toMe({id, name, email, role, organisation, preferences}: PersonEntity): Me {
   return {
@@ -13,7 +21,7 @@ export function toMe({id, name, email, role, organisation, preferences}: PersonE
   };
 }
 
-export function toDemoAccount(person: PersonEntity): SessionState['demoAccounts'][number] {
+export function toDemoAccount(person: PersonEntity): DemoAccount {
   const {email, name, role, organisation} = person;
   return {email, name, role, organisation: organisation.name, password: DEMO_PASSWORD};
 }
