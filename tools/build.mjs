@@ -59,17 +59,19 @@ async function buildClient() {
   });
 }
 
-/** main, worker and seed, and every `*-thread.ts`, which runs in a thread of the worker. */
+/**
+ * main, worker and seed, and every `*-thread.ts`, which runs in a thread of the worker. All lie side by side, so that
+ * `new URL('./x-thread.js', import.meta.url)` finds a thread from within the bundle.
+ */
 async function buildServer() {
   const {build: bundle} = await import('esbuild');
-  const entries = filesBelow('server', ROOT).filter(
-    (file) => /^server\/(main|worker|seed)\.ts$/.test(file) || file.endsWith('-thread.ts'),
-  );
+  const entries = filesBelow('server', ROOT)
+    .filter((file) => /^server\/(main|worker|seed)\.ts$|-thread\.ts$/.test(file))
+    .map((file) => ({in: file, out: path.basename(file, '.ts')}));
   fs.rmSync(path.join(DIST, 'server'), {recursive: true, force: true});
   await bundle({
     absWorkingDir: ROOT,
     entryPoints: entries,
-    outbase: 'server',
     outdir: 'dist/server',
     bundle: true,
     platform: 'node',
