@@ -29,7 +29,7 @@ export function pidOutput(state: Float64Array, tuning: Float64Array, news: Float
   } else state[at.DERIVATIVE] = 0;
   state[at.LAST_Y] = y;
 
-  const derivative = gain * tdS * state[at.DERIVATIVE]!;
+  const derivative = gain * tdS * state[at.DERIVATIVE];
   const wanted = compensation * (proportional + state[at.INTEGRAL]! - derivative) + assist;
   const output = set.clampOutput(tuning, wanted);
   const limit = wanted >= tuning[set.OUT_MAX]! ? 1 : wanted <= tuning[set.OUT_MIN]! ? -1 : 0;

@@ -46,7 +46,7 @@ export class Equations {
     this.curve = new Points(brake.curve ?? STRAIGHT);
     this.hasDancer = sensing.kind === 'dancer';
     this.hasFilter = n[now.PER_FILTER]! > 0;
-    this.hasRunout = n[now.RUNOUT]! > 0;
+    this.hasRunout = n[now.RUNOUT] > 0;
     this.hasFixedPath = !this.hasDancer && !this.hasRunout;
     this.hasGrip = n[now.EXTRA_GRIP]! > 0;
   }
@@ -68,7 +68,7 @@ export class Equations {
     n[now.C0] = line.c0[piece]!;
     n[now.C1] = line.c1[piece]!;
     n[now.C2] = line.c2[piece]!;
-    n[now.MOVES] = n[now.C0]! + half * (n[now.C1]! + half * n[now.C2]!) > 0 ? 1 : 0;
+    n[now.MOVES] = n[now.C0] + half * (n[now.C1] + half * n[now.C2]) > 0 ? 1 : 0;
   }
 
   /** Signal of the load cell [N] for this web tension, or for the known load that hangs instead. */

@@ -28,6 +28,9 @@ export function replay(
   const faults = stampFaults(entries, throughTick);
   if (faults.length > 0) throw new ScenarioError(faults);
 
+  if (block !== undefined && block.capacity - block.count < throughTick)
+    throw new RangeError(`The block has no room for ${throughTick} rows.`);
+
   const run = new Simulation(scenario);
   entries.forEach((entry, place) => {
     run.advance(entry.tick - run.tick, block);

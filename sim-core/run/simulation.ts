@@ -332,7 +332,7 @@ export class Simulation implements Run {
       modulusPa: this.plantState[place.MODULUS]!,
       largestRadiusM: this.plantState[place.LARGEST]!,
       pending: this.pending,
-      later: this.schedule.changes.slice(this.state[NEXT_CHANGE]!),
+      later: this.schedule.changes.slice(this.state[NEXT_CHANGE]),
     });
   }
 

@@ -55,10 +55,7 @@ export function commandFaults(
   const fields = LINE_FIELDS.map((field) =>
     field.onlyCommand === undefined ? field : optional(field),
   );
-  return [
-    ...readKeys(at, json, fields, {nullTakesOff: false, alsoKnown}),
-    ...lineFaults(at, json as Partial<LineCommand>),
-  ];
+  return [...readKeys(at, json, fields, {nullTakesOff: false, alsoKnown}), ...lineFaults(at, json)];
 }
 
 export function disturbFaults(at: string, json: unknown, scenario: Scenario): Fault[] {

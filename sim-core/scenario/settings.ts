@@ -58,5 +58,5 @@ export function settingsOf(controller: ControllerParams): Settings {
 
 /** The settings after one `set`; null takes a key off. */
 export function changed(settings: Settings, set: LiveSettings): Settings {
-  return {...settings, ...set} as Settings;
+  return {...settings, ...set};
 }
