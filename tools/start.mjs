@@ -5,7 +5,7 @@ import {build} from './build.mjs';
 import {endChildren} from './children.mjs';
 import {checkMayInstall, installPostgres} from './debian.mjs';
 import {nameOfProcess, readLock, tryLock} from './lock.mjs';
-import {checkNode, installModules, modulesAreInstalled, ROOT} from './modules.mjs';
+import {checkNode, installModules, ROOT} from './modules.mjs';
 import {startPostgres} from './pg.mjs';
 import {findPrograms, PostgresMissingError} from './postgres/place.mjs';
 import {choosePort} from './start/choose-port.mjs';
@@ -28,18 +28,18 @@ async function start() {
   if (!hold) return sayWhoRuns(file);
   started.push(() => hold.release());
 
-  if (needsPostgres) installPostgres();
-  if (!modulesAreInstalled()) await installModules();
-  await build();
   await stopLeftovers(run);
+  const port = await choosePort(process.env.PORT); // a wrong one is told before the long work
+  if (needsPostgres) installPostgres();
+  await installModules();
+  await build();
 
-  const port = await choosePort(process.env.PORT);
   const own = bringsDatabase ? await ownDatabase() : {};
   const url = `http://127.0.0.1:${port}/`;
   const env = {
     ...process.env,
     PORT: String(port),
-    SESSION_SECRET: process.env.SESSION_SECRET ?? sessionSecret(run),
+    SESSION_SECRET: process.env.SESSION_SECRET || sessionSecret(run),
     NODE_ENV: 'production',
     ...own,
   };
