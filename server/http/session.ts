@@ -6,8 +6,9 @@ import {type AppParts} from '../app-parts';
 import {type Caller} from '../caller';
 import {poolOf} from '../db/pool';
 
-/** A session ends after this long without a call [s]. */
-const LASTS_S = 14 * 24 * 3600;
+/** A session ends after this long [ms]: of somebody signed in, and of a visitor, who only needs a token. */
+export const SIGNED_IN_LASTS_MS = 14 * 24 * 3600 * 1000;
+const VISIT_LASTS_MS = 24 * 3600 * 1000;
 const SessionStore = connectPgSimple(session);
 
 /** Middleware that finds out who calls: the session from its cookie, the caller from the database. */
@@ -18,7 +19,6 @@ export function sessions(
   const store = new SessionStore({
     pool: poolOf(db),
     tableName: 'session',
-    ttl: LASTS_S,
     pruneSessionInterval: config.environment === 'test' ? false : 15 * 60,
     errorLog: (...words: unknown[]) => log.error({words}, 'session store'),
   });
@@ -43,7 +43,7 @@ export function sessions(
         sameSite: 'lax',
         secure: config.isSecure,
         path: '/',
-        maxAge: LASTS_S * 1000,
+        maxAge: VISIT_LASTS_MS,
       },
     }),
     passport.session() as RequestHandler,

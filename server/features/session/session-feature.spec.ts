@@ -163,6 +163,26 @@ describe('the session', () => {
       expect(again.body.me.email).toBe(email);
     });
 
+    it('for two weeks to who is signed in, for a day to a visitor', async () => {
+      const {email} = await server().person('trainee');
+      const agent = supertest.agent(server().http);
+      const visit = await agent.get('/api/session');
+      const signedIn = await agent
+        .post('/api/session')
+        .set('X-XSRF-TOKEN', tokenOf(visit.headers) ?? '')
+        .send({email, password: PASSWORD});
+
+      const days = [visit, signedIn].map((reply) => {
+        const until = /Expires=([^;]+)/.exec(cookieOf(reply, 'evenspan-session='))?.[1] ?? '';
+        return Math.round((Date.parse(until) - Date.now()) / 86_400_000);
+      });
+      expect(days).toEqual([1, 14]);
+      const [{far}] = await server().db.query<[{far: boolean}]>(
+        "select max(expire) > now() + interval '13 days' as far from session",
+      );
+      expect(far).toBeTrue();
+    });
+
     it('with cookies that scripts cannot read but for the token', async () => {
       const reply = await supertest(server().http).get('/api/session').expect(200);
 

@@ -44,6 +44,16 @@ describe('the limit of sign-in tries', () => {
     await tryIn(again, email, '192.0.2.4').expect(400);
   });
 
+  it('counts an address as long as they may be', async () => {
+    const agent = await server().visitor();
+    const email = `${'x'.repeat(239)}@people.example`;
+
+    const {body} = await tryIn(agent, email, '2001:db8:ffff:ffff:ffff:ffff:ffff:ffff').expect(400);
+
+    expect(body.code).toBe('invalid-input');
+    expect(body.errors).toEqual([]);
+  });
+
   it('is looser for a network address, behind which a whole group may sit', async () => {
     const agent = await server().visitor();
     await server().db.query(

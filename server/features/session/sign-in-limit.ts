@@ -1,3 +1,4 @@
+import {createHash} from 'node:crypto';
 import {RateLimiterPostgres, RateLimiterRes} from 'rate-limiter-flexible';
 import {type DataSource} from 'typeorm';
 import {poolOf} from '../../db/pool';
@@ -19,17 +20,21 @@ export class SignInLimit {
       storeType: 'client',
       tableName: 'sign_in_limit',
       tableCreated: true, // by a migration
-      clearExpiredByTimeout: false, // a timer would keep the process; expired rows are reused
     };
     this.byAccount = new RateLimiterPostgres({...shared, ...PER_ACCOUNT, keyPrefix: 'account'});
-    this.byNetwork = new RateLimiterPostgres({...shared, ...PER_NETWORK, keyPrefix: 'network'});
+    this.byNetwork = new RateLimiterPostgres({
+      ...shared,
+      ...PER_NETWORK,
+      keyPrefix: 'network',
+      clearExpiredByTimeout: false, // the other one clears the table of both
+    });
   }
 
   /** Counts one try, before the password is looked at; refuses one too many. */
   async spend(networkAddress: string, email: string): Promise<void> {
     try {
       await this.byNetwork.consume(networkAddress);
-      await this.byAccount.consume(`${networkAddress} ${email}`);
+      await this.byAccount.consume(keyOf(networkAddress, email));
     } catch (refused) {
       if (!(refused instanceof RateLimiterRes)) throw refused; // the database is gone
       const retryAfterS = Math.ceil(refused.msBeforeNext / 1000);
@@ -42,6 +47,11 @@ export class SignInLimit {
 
   /** A right password clears the account's count. */
   async forgive(networkAddress: string, email: string): Promise<void> {
-    await this.byAccount.delete(`${networkAddress} ${email}`);
+    await this.byAccount.delete(keyOf(networkAddress, email));
   }
+}
+
+/** A hash, since an address may be longer than a key; and nobody's address stays in a table of tries. */
+function keyOf(networkAddress: string, email: string): string {
+  return createHash('sha256').update(`${networkAddress} ${email}`).digest('base64url');
 }
