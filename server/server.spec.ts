@@ -1,5 +1,7 @@
 import {type ChildProcess, spawn} from 'node:child_process';
 import {readConfig} from './config';
+import {makeDataSource} from './db/data-source';
+import {PeopleService} from './features/people/people-service';
 import {makeLog} from './log';
 import {type RunningServer, startServer} from './server';
 import {makeEmptyDatabase, type TestDatabase} from './test-support/test-database';
@@ -12,9 +14,9 @@ interface Program {
   readonly ended: Promise<number | null>;
 }
 
-function run(file: string, settings: Record<string, string>): Program {
+function run(file: string, settings: Record<string, string>, words: string[] = []): Program {
   const bare = {PATH: process.env['PATH'] ?? '', HOME: process.env['HOME'] ?? ''};
-  const child = spawn(process.execPath, ['--import', 'tsx', `server/${file}`], {
+  const child = spawn(process.execPath, ['--import', 'tsx', `server/${file}`, ...words], {
     env: {...bare, ...settings},
   });
   let said = '';
@@ -100,5 +102,25 @@ describe('the programs', () => {
     expect(seed.said()).toBe(again.said());
     expect(seed.said()).toMatch(/ines\.holt@harrow-lane\.example +trainee +Harrow Lane Converting/);
     expect(seed.said()).toContain('Password of all: ');
+  }, 60_000);
+
+  it('an organisation is made from the command line, with an administrator who can sign in', async () => {
+    const tool = (...words: string[]): Program =>
+      run('../tools/organisation.ts', {DATABASE_URL: database.url}, words);
+    const made = tool('create', 'Quiet Mill', 'Head@Quiet-Mill.example');
+    const code = await made.ended;
+    const [again, useless] = [tool('create', 'Other', 'head@quiet-mill.example'), tool('create')];
+
+    expect([code, await again.ended, await useless.ended]).toEqual([0, 1, 2]);
+    expect(again.said()).toContain('The address head@quiet-mill.example is in use.');
+    expect(useless.said()).toContain('usage: ');
+    const password = /with (\S+)\n$/.exec(made.said())?.[1] ?? 'none printed';
+    const db = await makeDataSource(database.url).initialize();
+    const caller = await new PeopleService(db).findBySignIn('head@quiet-mill.example', password);
+    const [{n}] = await db.query<[{n: number}]>(
+      "select count(*)::int as n from organisation where name in ('Quiet Mill', 'Other')",
+    );
+    await db.destroy();
+    expect([caller?.role, n]).toEqual(['administrator', 1]);
   }, 60_000);
 });
