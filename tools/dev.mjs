@@ -1,7 +1,7 @@
 // npm run dev: the database, server and worker that restart when their sources change, and ng serve that reloads.
 import fs from 'node:fs';
 import path from 'node:path';
-import {startChild} from './children.mjs';
+import {runChild, startChild} from './children.mjs';
 import {checkNode, installModules, ROOT} from './modules.mjs';
 import {startPostgres} from './pg.mjs';
 import {portIsFree} from './ports.mjs';
@@ -33,6 +33,10 @@ async function start() {
     NODE_ENV: 'development',
     NG_CLI_ANALYTICS: 'false',
   };
+  if (own) {
+    const seed = ['--import', 'tsx', 'server/seed.ts'];
+    console.log(await runChild(process.execPath, seed, {cwd: ROOT, env}));
+  }
   const ng = path.join('node_modules', '@angular', 'cli', 'bin', 'ng.js');
   const programs = {
     server: [...WATCH, 'server/main.ts'],

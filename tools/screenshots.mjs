@@ -46,7 +46,7 @@ try {
     NODE_ENV: 'production',
     DEMO: '1',
   };
-  await seedOnce(env);
+  await seedOnce(env, postgres.dir);
   const programs = [];
   for (const name of ['worker', 'server']) {
     const program = await startProgram(name, {env, run});

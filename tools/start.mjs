@@ -34,14 +34,18 @@ async function start() {
   await installModules();
   await build();
 
-  const own = bringsDatabase ? await ownDatabase() : {};
+  const postgres = bringsDatabase ? await ownDatabase() : undefined;
   const url = `http://127.0.0.1:${port}/`;
   const env = {
     ...process.env,
     PORT: String(port),
     SESSION_SECRET: process.env.SESSION_SECRET || sessionSecret(run),
     NODE_ENV: 'production',
-    ...own,
+    ...(postgres && {
+      DATABASE_URL: postgres.serverUrl,
+      DATABASE_OWNER_URL: postgres.url,
+      DEMO: '1',
+    }),
   };
   const programs = [];
   for (const name of ['worker', 'server']) {
@@ -49,7 +53,7 @@ async function start() {
     programs.push(program);
     started.push(() => program.stop());
   }
-  const seeded = bringsDatabase ? seedOnce(env) : undefined;
+  const seeded = postgres && seedOnce(env, postgres.dir);
   const [accounts] = await Promise.all([seeded, waitUntilReady(url, programs)]);
   hold.note(url);
   sayReady(url, accounts);
@@ -65,7 +69,7 @@ async function ownDatabase() {
       fail(`PostgreSQL ended; see ${postgres.dir}/server.log`);
   }, 1_000);
   started.push(() => clearInterval(watch));
-  return {DATABASE_URL: postgres.serverUrl, DATABASE_OWNER_URL: postgres.url, DEMO: '1'};
+  return postgres;
 }
 
 function postgresIsInstalled() {
