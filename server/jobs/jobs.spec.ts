@@ -4,6 +4,8 @@ import * as z from 'zod';
 import {slowJob} from '../test-support/slow-job';
 import {useTestServer} from '../test-support/test-server';
 import {job, type WorkerParts} from './job';
+import {makeBoss} from './boss';
+import {QueueLoop} from './queue-loop';
 import {makeQueues} from './queues';
 import {startWorker} from './worker';
 
@@ -120,6 +122,27 @@ describe('jobs', () => {
     await stopped;
 
     expect(done).toEqual([7]);
+  });
+
+  it('at work longer than a stop may take are given back', async () => {
+    const {config, log} = server().parts;
+    const boss = makeBoss({url: config.databaseUrl, log});
+    await boss.start();
+    let isBegun = false;
+    const never = (): Promise<void> => {
+      isBegun = true;
+      return new Promise(() => undefined);
+    };
+    await send({roll: 8});
+    const loop = new QueueLoop(boss, weigh.name, never, log);
+    loop.start();
+    await waitFor(() => isBegun);
+
+    await loop.stop(20);
+    await boss.stop({graceful: false});
+    await withWorker(() => done.length > 0);
+
+    expect(done).toEqual([8]);
   });
 });
 

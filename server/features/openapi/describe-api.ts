@@ -1,8 +1,10 @@
 import * as z from 'zod';
 import {
   createDocument,
+  type ZodOpenApiContentObject,
   type ZodOpenApiOperationObject,
   type ZodOpenApiPathsObject,
+  type ZodOpenApiResponseObject,
   type ZodOpenApiResponsesObject,
 } from 'zod-openapi';
 import {type Endpoint} from '#shared/endpoint';
@@ -31,13 +33,8 @@ export function describeApi(
 }
 
 function describe(endpoint: Endpoint): ZodOpenApiOperationObject {
-  const {params, query, body} = partsOf(endpoint);
-  const bodyType = endpoint.kind === 'upload' ? 'multipart/form-data' : 'application/json';
-  const isUpload = endpoint.kind === 'upload';
-  const file = z.object({
-    file: z.file().meta({description: `At most ${isUpload ? endpoint.maxBytes : 0} bytes.`}),
-  });
-  const sent = isUpload ? file : body;
+  const {params, query} = partsOf(endpoint);
+  const content = contentOf(endpoint);
   return {
     summary: endpoint.summary,
     'x-access': endpoint.access,
@@ -45,9 +42,17 @@ function describe(endpoint: Endpoint): ZodOpenApiOperationObject {
       ...(params instanceof z.ZodObject && {path: params}),
       ...(query instanceof z.ZodObject && {query}),
     },
-    ...(sent && {requestBody: {required: true, content: {[bodyType]: {schema: sent}}}}),
+    ...(content && {requestBody: {required: true, content}}),
     responses: responsesOf(endpoint),
   };
+}
+
+function contentOf(endpoint: Endpoint): ZodOpenApiContentObject | undefined {
+  const {body} = partsOf(endpoint);
+  if (endpoint.kind !== 'upload') return body && {'application/json': {schema: body}};
+  const file = z.file().max(endpoint.maxBytes);
+  const fields = body instanceof z.ZodObject ? body.shape : {};
+  return {'multipart/form-data': {schema: z.object({...fields, file})}};
 }
 
 function partsOf({input}: Endpoint): Record<'params' | 'query' | 'body', z.ZodType | undefined> {
@@ -63,7 +68,7 @@ function responsesOf(endpoint: Endpoint): ZodOpenApiResponsesObject {
   return {'200': answerOf(endpoint), default: problem};
 }
 
-function answerOf(endpoint: Endpoint): ZodOpenApiResponsesObject[`${1 | 2 | 3 | 4 | 5}${string}`] {
+function answerOf(endpoint: Endpoint): ZodOpenApiResponseObject {
   switch (endpoint.kind) {
     case 'download':
       return {description: 'The file.', content: {[endpoint.mediaType]: {}}};

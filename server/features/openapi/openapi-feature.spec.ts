@@ -1,5 +1,7 @@
+import * as z from 'zod';
 import {mountedOn} from '../../http/mounted';
 import {useTestServer} from '../../test-support/test-server';
+import {describeApi} from './describe-api';
 
 describe('the description of the API', () => {
   const server = useTestServer();
@@ -29,5 +31,32 @@ describe('the description of the API', () => {
     ).toEqual(['email', 'password']);
     expect(signIn.responses['200'].content['application/json'].schema.required).toContain('me');
     expect(signIn.responses.default.content['application/problem+json']).toBeDefined();
+  });
+
+  it('tells what an upload takes and what a download gives', () => {
+    const base = {access: 'signed-in', summary: 'For this spec.', input: z.object({})} as const;
+    const described = describeApi(
+      [
+        {...base, kind: 'upload', method: 'post', path: '/u/:id', reply: z.null(), maxBytes: 99},
+        {...base, kind: 'download', method: 'get', path: '/d', mediaType: 'text/csv'},
+      ],
+      'build',
+    );
+
+    const paths = described['paths'] as Record<string, Record<string, unknown>>;
+    expect(paths['/u/{id}']?.['post']).toEqual(
+      jasmine.objectContaining({
+        requestBody: {
+          required: true,
+          content: {
+            'multipart/form-data': {
+              schema: jasmine.objectContaining({required: ['file']}),
+            },
+          },
+        },
+      }),
+    );
+    expect(JSON.stringify(paths['/d']?.['get'])).toContain('"200":{"description":"The file."');
+    expect(JSON.stringify(paths['/d']?.['get'])).toContain('text/csv');
   });
 });
