@@ -43,7 +43,7 @@ export class AttemptKeeper {
     const fixed = await change.objectStore('batches').get([this.attemptId, number]);
     if (fixed !== undefined) {
       await change.done;
-      return {...fixed.batch, writerKey: attempt.writerKey as Batch['writerKey']};
+      return {...fixed.batch, writerKey: attempt.writerKey};
     }
 
     const waiting = await change.objectStore('waiting').getAll(this.range());

@@ -1,7 +1,7 @@
 import {computed, DestroyRef, inject, Injectable, signal} from '@angular/core';
 import {type Act, type Scenario} from '#sim-core/index';
 import {LiveRun} from '../../live-run/live-run';
-import {ApiFailure, toApiFailure} from '../../platform/api-failure';
+import {type ApiFailure, toApiFailure} from '../../platform/api-failure';
 import {BuildCheck} from '../../platform/build-check';
 import {Connection} from '../../platform/connection';
 import {

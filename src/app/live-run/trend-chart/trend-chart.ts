@@ -7,6 +7,7 @@ import {
   ElementRef,
   inject,
   input,
+  linkedSignal,
   signal,
   untracked,
   viewChildren,
@@ -18,7 +19,14 @@ import {formatted, type Quantity, toPerson, unitName, type UnitSystem} from '#sh
 import type uPlot from 'uplot';
 import {type LiveRun} from '../live-run';
 import {onThemeChange, type Palette, readPalette} from './palette';
-import {drawBand, drawMarks, drawPhases, marksOf} from './trend-marks';
+import {
+  drawBand,
+  drawMarks,
+  drawNumbers,
+  drawPhases,
+  marksOf,
+  type PlaceNumber,
+} from './trend-marks';
 import {makePlot, type PlotSpec} from './trend-plots';
 
 const SAMPLE_S = 0.01;
@@ -44,11 +52,18 @@ export class TrendChart {
   /** Tension that fills the plot on the fixed scale [N]. */
   readonly topN = input.required<number>();
   readonly largestRadiusM = input.required<number>();
+  /** Numbered places on the tension trace. */
+  readonly numbers = input<readonly PlaceNumber[]>([]);
+  /** Length of the window at first [s]; `all` shows the whole run. */
+  readonly firstWindowS = input<number | 'all'>(60);
 
   private readonly host = inject<ElementRef<HTMLElement>>(ElementRef);
   private readonly hosts = viewChildren<ElementRef<HTMLElement>>('plot');
 
-  protected readonly windowS = signal(60);
+  protected readonly windowS = linkedSignal(() => {
+    const first = this.firstWindowS();
+    return first === 'all' ? Math.max(10, Math.ceil(this.run().trace.count * SAMPLE_S)) : first;
+  });
   protected readonly isAutoScale = signal(false);
   /** End of the window while it is held [s]; null follows the run. */
   protected readonly heldEndS = signal<number | null>(null);
@@ -111,6 +126,7 @@ export class TrendChart {
       this.heldEndS();
       this.band();
       this.marks();
+      this.numbers();
       this.units();
       untracked(() => this.draw());
     });
@@ -176,6 +192,9 @@ export class TrendChart {
       drawAbove: (plot) => {
         drawPhases(plot, this.run().trace, SAMPLE_S, this.colours());
         drawMarks(plot, this.marks(), SAMPLE_S, this.colours(), true);
+        drawNumbers(plot, this.numbers(), SAMPLE_S, this.colours(), (tick) =>
+          shown('tension', this.run().trace.at(tick, 'tensionN')),
+        );
       },
     };
     const marksOnly = (plot: uPlot): void =>

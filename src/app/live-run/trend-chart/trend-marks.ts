@@ -12,6 +12,12 @@ export interface Mark {
   readonly isAlarm: boolean;
 }
 
+/** A numbered place on the tension trace: where marks were lost. */
+export interface PlaceNumber {
+  readonly tick: number;
+  readonly number: number;
+}
+
 /** Marks of everything somebody did and everything that happened, in time's order. */
 export function marksOf(
   entries: readonly LogEntry[],
@@ -76,6 +82,36 @@ export function drawMarks(
     ctx.fillStyle = mark.isAlarm ? palette.vermilion : palette.muted;
     ctx.fillText(mark.label, x + 4 * ratio, bbox.top + bbox.height - 3 * ratio);
     freeFrom = x + ctx.measureText(mark.label).width + 10 * ratio;
+  }
+  ctx.restore();
+}
+
+/** Draws numbered places on the tension trace; `valueAt` gives the shown tension of a tick. */
+export function drawNumbers(
+  plot: uPlot,
+  numbers: readonly PlaceNumber[],
+  sampleS: number,
+  palette: Palette,
+  valueAt: (tick: number) => number,
+): void {
+  const {ctx, bbox} = plot;
+  const ratio = devicePixelRatio;
+  const radius = 9 * ratio;
+  ctx.save();
+  ctx.font = `600 ${12 * ratio}px "Atkinson Hyperlegible Next Variable", sans-serif`;
+  ctx.textAlign = 'center';
+  ctx.textBaseline = 'middle';
+  for (const {tick, number} of numbers) {
+    const x = plot.valToPos(tick * sampleS, 'x', true);
+    if (x < bbox.left || x > bbox.left + bbox.width) continue;
+    const wanted = plot.valToPos(valueAt(tick), 'y', true);
+    const y = Math.min(bbox.top + bbox.height - radius, Math.max(bbox.top + radius, wanted));
+    ctx.beginPath();
+    ctx.arc(x, y, radius, 0, 2 * Math.PI);
+    ctx.fillStyle = palette.vermilion;
+    ctx.fill();
+    ctx.fillStyle = palette.sheet;
+    ctx.fillText(`${number}`, x, y + ratio);
   }
   ctx.restore();
 }
