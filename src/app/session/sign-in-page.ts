@@ -22,8 +22,8 @@ export class SignInPage {
 
   private readonly form = viewChild.required(SignInForm);
 
-  protected fill(email: string): void {
-    this.form().fill(email, '');
+  protected fill(email: string, password = ''): void {
+    this.form().fill(email, password);
   }
 
   protected async goOn(): Promise<void> {

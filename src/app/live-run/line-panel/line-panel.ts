@@ -40,6 +40,8 @@ export class LinePanel {
   /** Whether the line stands. */
   readonly stands = input(true);
   readonly isOver = input(false);
+  /** Rounding of the line's ramps [s]: the line takes this much longer than the ramp. */
+  readonly roundS = input(0);
   /** Ramps and speed the fields begin with (SI). */
   readonly first = input({speedMps: 2, startS: 10, stopS: 4, fastStopS: 2.5});
 

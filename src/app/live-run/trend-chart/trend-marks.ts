@@ -101,8 +101,11 @@ export function drawNumbers(
   ctx.font = `600 ${12 * ratio}px "Atkinson Hyperlegible Next Variable", sans-serif`;
   ctx.textAlign = 'center';
   ctx.textBaseline = 'middle';
-  for (const {tick, number} of numbers) {
-    const x = plot.valToPos(tick * sampleS, 'x', true);
+  let freeFrom = -Infinity;
+  for (const {tick, number} of numbers.toSorted((a, b) => a.tick - b.tick)) {
+    // Two numbers of one moment stand beside each other.
+    const x = Math.max(freeFrom, plot.valToPos(tick * sampleS, 'x', true));
+    freeFrom = x + 2 * radius + 2 * ratio;
     if (x < bbox.left || x > bbox.left + bbox.width) continue;
     const wanted = plot.valToPos(valueAt(tick), 'y', true);
     const y = Math.min(bbox.top + bbox.height - radius, Math.max(bbox.top + radius, wanted));

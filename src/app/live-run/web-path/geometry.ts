@@ -24,7 +24,7 @@ export function tangent(a: Wheel, b: Wheel): Stretch {
   const distance = Math.hypot(b.x - a.x, b.y - a.y);
   const direction = Math.atan2(b.y - a.y, b.x - a.x);
   const lean = Math.asin(Math.max(-1, Math.min(1, (ra - rb) / distance)));
-  const normal = direction + lean + Math.PI / 2;
+  const normal = direction - lean + Math.PI / 2;
   return {
     from: {x: a.x + ra * Math.cos(normal), y: a.y + ra * Math.sin(normal)},
     to: {x: b.x + rb * Math.cos(normal), y: b.y + rb * Math.sin(normal)},
