@@ -5,11 +5,15 @@ import {Equations} from './equations';
 import * as now from './evaluation';
 import {Line} from './line';
 import * as at from './plant-state';
-import {endOf, regionOf, rest} from './regions';
+import {endOf, JUMPS, regionOf, rest} from './regions';
 import {Stand, withinTurn} from './stand';
 
-/** How often a step that crosses a bend is halved; the last halves count as "at the bend". */
-const DEEPEST = 5;
+/**
+ * How often a step is halved that crosses a bend; the last halves count as "at the bend". A kink leaves an
+ * error of the second order in the last half; a jump (stick, slack, stop) one of the first.
+ */
+const DEEPEST_KINK = 5;
+const DEEPEST = 16;
 
 /** Times closer than this are the same moment [s]. */
 const SAME_S = 1e-12;
@@ -209,8 +213,10 @@ export class Plant {
     }
     y0[at.DRIVE] = state[at.DRIVE]!;
     this.rungeKutta();
-    if (regionOf(this.equations, y) === this.region) return true;
-    return depth < DEEPEST ? this.halve(depth) : this.cross();
+    const bends = regionOf(this.equations, y) ^ this.region;
+    if (bends === 0) return true;
+    const deepest = (bends & JUMPS) === 0 ? DEEPEST_KINK : DEEPEST;
+    return depth < deepest ? this.halve(depth) : this.cross();
   }
 
   /** Takes a step back and does it again in two halves. */

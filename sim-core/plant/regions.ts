@@ -18,6 +18,9 @@ const WEB_BROKEN = 1024;
 const ROLL_EMPTY = 2048;
 const PIECE_OF_CURVE = 4096; // counted in the bits above
 
+/** Bits at which tension, speed or mode jump; at the others a slope bends. */
+export const JUMPS = TAUT | TURNED_BACK | BROKEN_LOOSE | PAST_STOP | WEB_BROKEN | ROLL_EMPTY;
+
 /** Bits of where the last evaluation lies; a step between two that differ has crossed a bend. */
 export function regionOf(equations: Equations, y: Float64Array): number {
   const {now: n} = equations;

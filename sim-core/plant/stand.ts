@@ -5,7 +5,7 @@ import {type Equations} from './equations';
 import * as now from './evaluation';
 import * as at from './plant-state';
 import {outOfRound, radiusSquare, woundLength} from './roll';
-import {fastestRate, stepParts} from './stiffness';
+import {paceOf, stepParts} from './stiffness';
 
 /** Roll speed below which a roll change counts as one at rest [rad/s]. */
 const AT_REST_RADPS = 1e-3;
@@ -48,8 +48,8 @@ export class Stand {
   refresh(): void {
     const {state} = this;
     this.equations.refresh();
-    const rate = fastestRate(this.scenario, state[at.MODULUS]!, state[at.LARGEST]!);
-    this.parts = stepParts(this.plantStepS, rate);
+    const pace = paceOf(this.scenario, state[at.MODULUS]!, state[at.LARGEST]!);
+    this.parts = stepParts(this.plantStepS, pace);
   }
 
   /** All values of one disturbance act together. */

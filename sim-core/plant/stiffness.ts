@@ -6,11 +6,19 @@ export const MOST_PARTS = 16;
 /** Steepest fall of the grip 1/(1 + z²) over z: 3·√3/8. */
 const STEEPEST_GRIP = 0.649519052838329;
 
-/**
- * Upper bound of the plant's fastest rate [1/s] at this modulus, over every radius from the core to
- * `largestRadiusM`. Roll and dancer hang on the same web, so their stiffness per mass simply adds up.
- */
-export function fastestRate(scenario: Scenario, modulusPa: number, largestRadiusM: number): number {
+/** Turning of the fastest vibration within a part of a step [rad] at most, for its phase to stay right. */
+const FINE = 0.15;
+
+/** How fast a plant can be at a modulus, over every radius from the core to the largest. */
+export interface Pace {
+  /** Upper bound of the fastest rate [1/s]. */
+  readonly rate: number;
+  /** Upper bound of the frequency of a vibration [rad/s]. */
+  readonly vibration: number;
+}
+
+/** Roll and dancer hang on the same web, so their stiffness per mass simply adds up. */
+export function paceOf(scenario: Scenario, modulusPa: number, largestRadiusM: number): Pace {
   const {web, roll, span, brake, sensing} = scenario;
   const stiffness = (modulusPa * web.widthM * web.thicknessM) / span.lengthM; // [N/m]
   const leastInertia = roll.coreInertiaKgM2;
@@ -28,14 +36,24 @@ export function fastestRate(scenario: Scenario, modulusPa: number, largestRadius
   const spring = stiffness * perMass; // [1/s²]
 
   const spread = (damping * damping) / 4 - spring;
-  const mechanical = spread > 0 ? damping / 2 + Math.sqrt(spread) : Math.sqrt(spring);
-  return Math.max(mechanical, brake.conductanceWPerK / brake.capacityJPerK);
+  const vibration = Math.sqrt(spring);
+  const mechanical = spread > 0 ? damping / 2 + Math.sqrt(spread) : vibration;
+  return {rate: Math.max(mechanical, brake.conductanceWPerK / brake.capacityJPerK), vibration};
 }
 
-/** Into how many equal parts a plant step is divided so that rate × part <= 1; may exceed MOST_PARTS. */
-export function stepParts(plantStepS: number, rate: number): number {
-  const parts = -Math.floor(-(plantStepS * rate - 1e-9));
-  return Math.max(1, parts);
+/** Into how many equal parts a plant step must be divided so that rate × part <= 1; may exceed MOST_PARTS. */
+export function neededParts(plantStepS: number, {rate}: Pace): number {
+  return Math.max(1, ceiling(plantStepS * rate));
+}
+
+/** Into how many it is divided: finer where a vibration asks for it, at most MOST_PARTS. */
+export function stepParts(plantStepS: number, pace: Pace): number {
+  const fine = Math.min(MOST_PARTS, ceiling((plantStepS * pace.vibration) / FINE));
+  return Math.max(neededParts(plantStepS, pace), fine);
+}
+
+function ceiling(value: number): number {
+  return -Math.floor(-(value - 1e-9));
 }
 
 /** Greatest R²/J(R) [1/kg] between core and `largestRadiusM`: where the roll answers quickest. */

@@ -1,4 +1,4 @@
-import {fastestRate, MOST_PARTS, stepParts} from '../plant/stiffness';
+import {MOST_PARTS, neededParts, paceOf} from '../plant/stiffness';
 import {type Act} from '../run/log';
 import {lineFaults} from './cross-rules';
 import {type Fault, ScenarioError} from './faults';
@@ -90,13 +90,13 @@ export function stiffnessFaults(
   largestRadiusM: number,
 ): Fault[] {
   const plantStepS = scenario.plantStepS ?? 0.001;
-  const rate = fastestRate(scenario, modulusPa, largestRadiusM);
-  if (stepParts(plantStepS, rate) <= MOST_PARTS) return [];
+  const pace = paceOf(scenario, modulusPa, largestRadiusM);
+  if (neededParts(plantStepS, pace) <= MOST_PARTS) return [];
   return [
     {
       path: at === '' ? 'plantStepS' : join(at, 'modulusPa'),
       value: at === '' ? plantStepS : modulusPa,
-      allowed: `a plant slower than ${Math.floor(MOST_PARTS / plantStepS)} 1/s (its fastest rate is ${Math.round(rate)} 1/s): a softer or longer web, a heavier roll or dancer, or a shorter plantStepS`,
+      allowed: `a plant slower than ${Math.floor(MOST_PARTS / plantStepS)} 1/s (its fastest rate is ${Math.round(pace.rate)} 1/s): a softer or longer web, a heavier roll or dancer, or a shorter plantStepS`,
     },
   ];
 }
