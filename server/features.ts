@@ -1,6 +1,8 @@
 import {type Router} from 'express';
 import {type AppParts} from './app-parts';
+import {attemptsFeature} from './features/attempts/attempts-feature';
 import {eventsFeature} from './features/events/events-feature';
+import {exercisesFeature} from './features/exercises/exercises-feature';
 import {healthFeature} from './features/health/health-feature';
 import {openapiFeature} from './features/openapi/openapi-feature';
 import {peopleFeature} from './features/people/people-feature';
@@ -9,7 +11,9 @@ import {type Feature} from './feature';
 
 /** What the server can do: one line per feature, in alphabetical order. */
 export const FEATURES: readonly Feature[] = [
+  attemptsFeature,
   eventsFeature,
+  exercisesFeature,
   healthFeature,
   openapiFeature,
   peopleFeature,
