@@ -44,7 +44,7 @@ const PLAIN: Scenario = {
 
 export function aScenario(parts: Parts = {}): Scenario {
   const merged: Record<string, unknown> = {...PLAIN};
-  for (const [key, value] of Object.entries<unknown>(parts as object)) {
+  for (const [key, value] of Object.entries<unknown>({...parts})) {
     merged[key] = isPart(value) ? {...(merged[key] as object), ...value} : value;
   }
   return merged as unknown as Scenario;
