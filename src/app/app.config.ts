@@ -3,10 +3,12 @@ import {
   type ApplicationConfig,
   ErrorHandler,
   inject,
+  isDevMode,
   provideAppInitializer,
   provideBrowserGlobalErrorListeners,
   provideZonelessChangeDetection,
 } from '@angular/core';
+import {provideServiceWorker} from '@angular/service-worker';
 import {provideRouter, withComponentInputBinding, withInMemoryScrolling} from '@angular/router';
 import {routes} from './app.routes';
 import {ErrorReporter} from './platform/error-reporter';
@@ -28,6 +30,11 @@ export const appConfig: ApplicationConfig = {
       withComponentInputBinding(),
       withInMemoryScrolling({scrollPositionRestoration: 'enabled'}),
     ),
+    // The pages open without a connection, so that an attempt can go on; calls are never answered from it.
+    provideServiceWorker('ngsw-worker.js', {
+      enabled: !isDevMode(),
+      registrationStrategy: 'registerWhenStable:5000',
+    }),
     // Also gives the page its forgery token before the first writing call.
     provideAppInitializer(() => inject(Session).load()),
   ],

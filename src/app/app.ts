@@ -10,6 +10,7 @@ import {takeUntilDestroyed} from '@angular/core/rxjs-interop';
 import {MatButtonModule} from '@angular/material/button';
 import {MatDialog} from '@angular/material/dialog';
 import {NavigationEnd, Router, RouterLink, RouterLinkActive, RouterOutlet} from '@angular/router';
+import {SwUpdate} from '@angular/service-worker';
 import {filter, firstValueFrom} from 'rxjs';
 import {NAVIGATION} from './navigation';
 import {BuildCheck} from './platform/build-check';
@@ -35,6 +36,7 @@ export class App {
   protected readonly errors = inject(ErrorReporter);
   private readonly element = inject<ElementRef<HTMLElement>>(ElementRef);
   private readonly dialog = inject(MatDialog);
+  private readonly updates = inject(SwUpdate);
 
   protected readonly entries = computed(() =>
     NAVIGATION.filter((entry) => this.session.may(entry.permission)),
@@ -61,7 +63,11 @@ export class App {
     this.element.nativeElement.querySelector<HTMLElement>('#page')?.focus();
   }
 
-  protected reload(): void {
+  /** The newer build must be the one that answers before the page asks for it. */
+  protected async reload(): Promise<void> {
+    if (this.updates.isEnabled) {
+      await this.updates.checkForUpdate().catch(() => false); // no connection: reload what there is
+    }
     location.reload();
   }
 

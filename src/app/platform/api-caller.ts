@@ -28,6 +28,7 @@ export class ApiCaller {
           body,
           params: given(query),
           withCredentials: true,
+          headers: {'ngsw-bypass': ''}, // the service worker must not answer for the server
         }),
       );
     } catch (error) {

@@ -12,7 +12,7 @@ export class EventFeed {
   /** Follows topics while subscribed; emits null after each (re)connect, meaning "read again". */
   follow(topics: readonly string[]): Observable<Nudge | null> {
     return new Observable((subscriber) => {
-      const url = `${urlOf(followEvents.path)}?topics=${encodeURIComponent(topics.join(','))}`;
+      const url = `${urlOf(followEvents.path)}?topics=${encodeURIComponent(topics.join(','))}&ngsw-bypass`;
       let waitMs = FIRST_WAIT_MS;
       let timer: ReturnType<typeof setTimeout> | undefined;
       let source: EventSource | undefined;

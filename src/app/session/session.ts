@@ -4,7 +4,7 @@ import {
   type Me,
   type Preferences,
   readSession,
-  type SessionState,
+  SessionState,
   signIn,
   type SignInDraft,
   signOut,
@@ -38,7 +38,10 @@ export class Session {
       this.failed.set(null);
       this.take(await this.api.call(readSession, {}));
     } catch (error) {
-      this.failed.set(toApiFailure(error)); // offline or unavailable
+      const failure = toApiFailure(error); // offline or unavailable
+      this.failed.set(failure);
+      // Without a connection the person who was signed in on this device goes on with what is kept here.
+      if (failure.code === 'offline') this.state.set(readLast());
     }
   }
 
@@ -59,6 +62,20 @@ export class Session {
   private take(state: SessionState): void {
     this.failed.set(null);
     this.state.set(state);
+    keepLast(state);
     applyTheme(state.me?.preferences.theme ?? 'system');
   }
+}
+
+const LAST = 'evenspan.session';
+
+/** Who was signed in last on this device: names only, the server decides at each call. */
+function readLast(): SessionState | null {
+  const kept = localStorage.getItem(LAST);
+  const parsed = SessionState.safeParse(kept === null ? null : JSON.parse(kept));
+  return parsed.success ? parsed.data : null;
+}
+
+function keepLast(state: SessionState): void {
+  localStorage.setItem(LAST, JSON.stringify({...state, demoAccounts: []}));
 }

@@ -14,7 +14,7 @@ import {ExerciseApi} from '../exercise-api';
 import {AttemptKeeper} from './attempt-keeper';
 import {holdAttempt} from './attempt-lock';
 import {AttemptSender, type SenderState} from './attempt-sender';
-import {joinLogs} from './take-up';
+import {joinLogs, type TakenUp} from './take-up';
 
 const NOTE_TICK_MS = 1000;
 
@@ -137,11 +137,8 @@ export class AttemptStore {
   private async takeUp(attemptId: string, database: PersonDatabase): Promise<void> {
     const keeper = new AttemptKeeper(database, attemptId);
     const here = await keeper.read();
-    const [attempt, log] = await Promise.all([
-      this.api.attempt(attemptId),
-      this.api.log(attemptId),
-    ]);
-    if (attempt.state !== 'running') {
+    const server = await this.readServer(attemptId, here !== undefined);
+    if (server !== null && server.attempt.state !== 'running') {
       await keeper.forget();
       this.stageNow.set({kind: 'handedIn'});
       return;
@@ -150,25 +147,42 @@ export class AttemptStore {
       this.stageNow.set({kind: 'otherDevice'});
       return;
     }
-    const joined = joinLogs({
-      server: {entries: log.entries, throughTick: log.throughTick},
-      here: {entries: await keeper.entries(), throughTick: here.throughTick},
-    });
+    const kept = {entries: await keeper.entries(), throughTick: here.throughTick};
+    const joined = server === null ? kept : joinLogs({server: server.log, here: kept});
     if (joined === null) {
       this.stageNow.set({kind: 'differs'});
       return;
     }
-    await keeper.acknowledge(log.lastBatch);
+    if (server !== null) await keeper.acknowledge(server.log.lastBatch);
+    await this.goOnFrom(keeper, here, joined);
+  }
+
+  /** What the server has; null without a connection, when this device can go on by itself. */
+  private async readServer(attemptId: string, isKeptHere: boolean) {
+    try {
+      const [attempt, log] = await Promise.all([
+        this.api.attempt(attemptId),
+        this.api.log(attemptId),
+      ]);
+      return {attempt, log};
+    } catch (error) {
+      const failure = toApiFailure(error);
+      if (failure.code === 'offline' && isKeptHere) return null;
+      throw failure;
+    }
+  }
+
+  private async goOnFrom(keeper: AttemptKeeper, here: KeptAttempt, log: TakenUp): Promise<void> {
     this.keeper = keeper;
     this.kept.set(here);
     const document: Scenario = {...here.document.scenario, seed: here.seed};
-    await this.run.start({document, handOverS: here.document.handOverS, ...joined});
-    this.startSending(attemptId, keeper, here.writerKey);
+    await this.run.start({document, handOverS: here.document.handOverS, ...log});
+    this.startSending(here.id, keeper, here.writerKey);
     // An `end` that was kept but not sent: the attempt only has to go out.
-    const isEnded = joined.entries.at(-1)?.kind === 'end';
+    const isEnded = log.entries.at(-1)?.kind === 'end';
     if (isEnded) this.run.halt('over');
     this.stageNow.set(
-      isEnded ? {kind: 'handingIn'} : {kind: 'ready', isResumed: joined.throughTick > 0},
+      isEnded ? {kind: 'handingIn'} : {kind: 'ready', isResumed: log.throughTick > 0},
     );
   }
 
