@@ -14,8 +14,9 @@ import {Fingerprint} from './hash';
 import {type Act, type EngineEntry, type LogEntry, type Note, type RunHash} from './log';
 import {mixChange, mixLine} from './mix-act';
 import {type Outcome, type Run, type RunEvent, type RunView, type SavedRun} from './run';
+import {type Parts, viewOf, writeControl, writePlant} from './readings';
 import {type Change, type Schedule, scheduleOf} from './schedule';
-import {COLUMN, PHASES, TRACE_COLUMNS, type TraceBlock} from './trace';
+import {type TraceBlock} from './trace';
 import {Watch, WATCH_SIZE} from './watch';
 
 /** Places at the front of the state, before the parts of controller and plant. */
@@ -63,6 +64,7 @@ export class Simulation implements Run {
   private readonly watch: Watch;
   private inForce: Settings;
   private pending: Act[] = [];
+  private readonly parts: Parts;
   private readonly news: Float64Array;
   private readonly isDancer: boolean;
 
@@ -89,6 +91,7 @@ export class Simulation implements Run {
       atZero: n[now.INERTIA_AT_ZERO]!,
       perFourth: n[now.INERTIA_PER_FOURTH]!,
     });
+    this.parts = {plant: this.plant, plantState: this.plantState, controlState: this.controlState};
     this.news = this.controller.news;
     this.isDancer = scenario.sensing.kind === 'dancer';
     const stretchLimit = (web.stretchLimitPct ?? 1e9) / 100;
@@ -149,29 +152,7 @@ export class Simulation implements Run {
   }
 
   view(): RunView {
-    const {plantState: p, controlState: c, plant, tick} = this;
-    const tS = tick * this.grid.sampleS;
-    return {
-      tick,
-      tS,
-      phase: PHASES[c[control.PHASE]!]!,
-      tensionN: p[place.TENSION]!,
-      sampleN: this.state[SAMPLE]!,
-      measuredN: p[place.FILTER]!,
-      setPointN: c[control.SET_POINT]!,
-      outputPct: c[control.OUTPUT]!,
-      lineMps: plant.line.speedAt(tS),
-      lineTargetMps: plant.line.targetMps,
-      rollRadps: p[place.OMEGA]!,
-      rollRad: p[place.THETA]!,
-      radiusM: plant.stand.radius(),
-      webLeftM: p[place.WOUND]!,
-      slackM: plant.stand.slack(),
-      torqueNm: plant.stand.torque(),
-      brakeC: p[place.HEAT]!,
-      dancerM: p[place.DANCER]!,
-      lineStands: plant.line.stands(tS),
-    };
+    return viewOf(this.parts, this.tick, this.grid.sampleS, this.state[SAMPLE]!);
   }
 
   hash(): RunHash {
@@ -206,7 +187,7 @@ export class Simulation implements Run {
     const {state, plantState, controlState, plant, news} = this;
     const tick = state[TICK]!;
     const t = tick * this.grid.sampleS;
-    if (block !== undefined) this.writePlant(block, t);
+    if (block !== undefined) writePlant(block, this.parts, t);
 
     this.applyDue(tick, t);
     plant.openTick(t);
@@ -219,7 +200,7 @@ export class Simulation implements Run {
     news[seen.LINE_SLOPE] = plant.line.c1[0]!;
     this.controller.tick();
     this.watch.phase(tick, controlState[control.PHASE]!);
-    if (block !== undefined) this.writeControl(block);
+    if (block !== undefined) writeControl(block, this.parts);
 
     plant.move(tick, controlState[control.OUTPUT]!, controlState[control.SET_POINT]!);
     this.lookAround(tick);
@@ -334,28 +315,5 @@ export class Simulation implements Run {
       pending: this.pending,
       later: this.schedule.changes.slice(this.state[NEXT_CHANGE]),
     });
-  }
-
-  private writePlant(block: TraceBlock, t: number): void {
-    const {plantState: p, plant} = this;
-    const row = block.count * TRACE_COLUMNS.length;
-    const {rows} = block;
-    rows[row + COLUMN.tensionN] = p[place.TENSION]!;
-    rows[row + COLUMN.measuredN] = p[place.FILTER]!;
-    rows[row + COLUMN.outputPct] = this.controlState[control.OUTPUT]!;
-    rows[row + COLUMN.lineMps] = plant.line.speedAt(t);
-    rows[row + COLUMN.rollRadps] = p[place.OMEGA]!;
-    rows[row + COLUMN.radiusM] = plant.stand.radius();
-    rows[row + COLUMN.slackM] = plant.stand.slack();
-    rows[row + COLUMN.torqueNm] = plant.stand.torque();
-    rows[row + COLUMN.brakeC] = p[place.HEAT]!;
-    rows[row + COLUMN.dancerM] = p[place.DANCER]!;
-  }
-
-  private writeControl(block: TraceBlock): void {
-    const row = block.count * TRACE_COLUMNS.length;
-    block.rows[row + COLUMN.setPointN] = this.controlState[control.SET_POINT]!;
-    block.rows[row + COLUMN.phase] = this.controlState[control.PHASE]!;
-    block.count++;
   }
 }
