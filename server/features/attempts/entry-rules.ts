@@ -77,7 +77,7 @@ function lineFaults(json: Readonly<Record<string, unknown>>, {commands}: Touch):
   const line = readLine(json);
   const own = commands.filter(({command}) => command === line.command);
   if (own.length === 0) {
-    const allowed = commands.map(({command}) => command).join(', ');
+    const allowed = [...new Set(commands.map(({command}) => command))].join(', ');
     return [{path: 'line.command', value: line.command, allowed: allowed || 'no command'}];
   }
   const isAllowed = own.some(
