@@ -25,7 +25,8 @@ export function toApiFailure(error: unknown): ApiFailure {
   if (error instanceof ApiFailure) return error;
   if (!(error instanceof HttpErrorResponse)) throw error; // a bug of ours, not a failed call
   // 504: what a proxy says for a server that does not answer
-  if (error.status === 0 || error.status === 504) return new ApiFailure('offline', 'The server did not answer.');
+  if (error.status === 0 || error.status === 504)
+    return new ApiFailure('offline', 'The server did not answer.');
 
   const problem = Problem.safeParse(readBody(error.error));
   if (!problem.success) {
