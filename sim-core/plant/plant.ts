@@ -6,24 +6,17 @@ import * as now from './evaluation';
 import {Line} from './line';
 import * as at from './plant-state';
 import {endOf, JUMPS, regionOf, rest} from './regions';
-import {Stand, withinTurn} from './stand';
+import {type Grid, Stand, withinTurn} from './stand';
 
 /**
  * How often a step is halved that crosses a bend; the last halves count as "at the bend". A kink leaves an
  * error of the second order in the last half; a jump (stick, slack, stop) one of the first.
  */
-const DEEPEST_KINK = 5;
+const DEEPEST_KINK = 6;
 const DEEPEST = 16;
 
 /** Times closer than this are the same moment [s]. */
 const SAME_S = 1e-12;
-
-/** Steps in time: the control tick and the plant steps in it. */
-export interface Grid {
-  readonly sampleS: number;
-  readonly plantStepS: number;
-  readonly stepsPerTick: number;
-}
 
 /** How the plant's run came to an end. */
 export interface PlantEnd {
@@ -42,7 +35,7 @@ const FULL_DECAY = 5;
 const LAG = 6; // of the drive [s]
 
 /**
- * The plant over one control tick: fourth-order Runge–Kutta steps of the plant step's parts, cut where the
+ * The plant over one control tick: fourth-order Runge–Kutta steps, cut where the
  * line's speed bends and halved where the equations bend (stick, slack, stops, knees of the curve). The
  * drive's lag is followed exactly. Speed beats form here; the state is the caller's typed array.
  */
@@ -87,7 +80,7 @@ export class Plant {
     const driveState = state.subarray(at.PLANT_SIZE, driveEnd);
     this.line = new Line(state.subarray(driveEnd));
     this.equations = new Equations(scenario, state);
-    this.stand = new Stand(scenario, state, this.equations, plantStepS);
+    this.stand = new Stand(scenario, state, this.equations, grid);
     this.drive = new Drive(driveState, brake, plantStepS, stepsPerTick);
     this.y = state.subarray(0, at.INTEGRATED);
     this.times[LAG] = brake.lagS;
@@ -127,24 +120,28 @@ export class Plant {
 
   /** Moves the plant through the tick with this output and, for a dancer, this loading. */
   move(tick: number, outputPct: number, loadingN: number): void {
-    const {equations, grid, drive, times, stand} = this;
+    const {equations, grid, drive, times} = this;
     drive.command(tick, outputPct);
     equations.now[now.LOADING] = loadingN;
     const early = drive.early(tick);
     const late = drive.late(tick);
-    this.setCommand(drive.changesAtStep > 0 ? early : late);
+    // the delayed command may change inside the tick
+    let changesAtS = early === late ? 0 : drive.changesAtStep * grid.plantStepS;
+    this.setCommand(changesAtS > 0 ? early : late);
     times[FROM] = 0;
     this.look();
     if (this.ended()) return;
 
-    const steps = grid.stepsPerTick * stand.parts;
-    const changesAt = drive.changesAtStep * stand.parts;
+    const steps = this.stand.stepsInTick();
     for (let step = 1; step <= steps; step++) {
-      if (!this.moveTo((step * grid.sampleS) / steps)) return;
-      if (step === changesAt && early !== late) {
+      const to = (step * grid.sampleS) / steps;
+      if (changesAtS > 0 && changesAtS < to + SAME_S) {
+        if (!this.moveTo(changesAtS)) return;
         this.setCommand(late);
         this.look();
+        changesAtS = 0;
       }
+      if (to > times[FROM] + SAME_S && !this.moveTo(to)) return;
     }
     this.close();
   }

@@ -5,21 +5,37 @@ import {type Equations} from './equations';
 import * as now from './evaluation';
 import * as at from './plant-state';
 import {outOfRound, radiusSquare, woundLength} from './roll';
-import {paceOf, stepParts} from './stiffness';
+import {ceiling, MOST_PARTS, paceOf} from './stiffness';
+
+/** Steps in time: the control tick and the plant steps in it. */
+export interface Grid {
+  readonly sampleS: number;
+  readonly plantStepS: number;
+  readonly stepsPerTick: number;
+}
+
+/** What vibrates or turns does so by this much in a step at most [rad], for its phase to stay right. */
+const FINE = 0.12;
+
+/** A step is this share of a lag at most. */
+const LAG_SHARE = 0.4;
+
+/** Plant steps that one step of the integration may take together where everything is slow. */
+const MERGED = 2;
 
 /** Roll speed below which a roll change counts as one at rest [rad/s]. */
 const AT_REST_RADPS = 1e-3;
 
 /** The stand as it is set up, disturbed and looked at; `Equations` says how it moves. */
 export class Stand {
-  /** Parts that a plant step is divided into at the present stiffness. */
-  parts = 1;
+  /** Steps a second that the present stiffness asks for, and the lags. */
+  private readonly stepsPerS = new Float64Array(1);
 
   constructor(
     private readonly scenario: Scenario,
     private readonly state: Float64Array,
     private readonly equations: Equations,
-    private readonly plantStepS: number,
+    private readonly grid: Grid,
   ) {}
 
   /** State at t = 0: everything at rest, the web at its initial tension. */
@@ -48,8 +64,31 @@ export class Stand {
   refresh(): void {
     const {state} = this;
     this.equations.refresh();
+    const {brake, sensing} = this.scenario;
     const pace = paceOf(this.scenario, state[at.MODULUS]!, state[at.LARGEST]!);
-    this.parts = stepParts(this.plantStepS, pace);
+    const filterS = sensing.kind === 'loadCell' ? sensing.filterS : 0;
+    this.stepsPerS[0] = Math.max(
+      pace.rate,
+      pace.vibration / FINE,
+      brake.lagS > 0 ? 1 / (LAG_SHARE * brake.lagS) : 0,
+      filterS > 0 ? 1 / (LAG_SHARE * filterS) : 0,
+    );
+  }
+
+  /**
+   * Steps that the coming tick is divided into: as many as the stiffness and everything that turns ask for,
+   * at least one for MERGED plant steps, at most MOST_PARTS for one.
+   */
+  stepsInTick(): number {
+    const {state, equations, grid} = this;
+    const {now: n} = equations;
+    let turning = 0; // fastest [rad/s]
+    if (n[now.OUT_OF_ROUND] === 1) turning = 2 * Math.abs(state[at.OMEGA]!);
+    if (equations.hasRunout) turning = Math.max(turning, Math.abs(n[now.C0]!) * n[now.PER_ROLLER]!);
+    if (state[at.RIPPLE] !== 0) turning = Math.max(turning, TWO_PI * state[at.RIPPLE_HZ]!);
+    const asked = ceiling(grid.sampleS * Math.max(this.stepsPerS[0]!, turning / FINE));
+    const least = ceiling(grid.stepsPerTick / MERGED);
+    return Math.min(Math.max(asked, least), MOST_PARTS * grid.stepsPerTick);
   }
 
   /** All values of one disturbance act together. */

@@ -1,5 +1,5 @@
 import {aDancerScenario, aScenario} from '../test-support/a-scenario';
-import {neededParts, paceOf, stepParts} from './stiffness';
+import {neededParts, paceOf} from './stiffness';
 
 describe('paceOf', () => {
   it('is the spring of web and core when there is no loss', () => {
@@ -29,11 +29,5 @@ describe('a plant step', () => {
     const needed = (rate: number): number => neededParts(0.001, {rate, vibration: 0});
 
     expect([10, 1000, 1001, 16_000, 16_001].map(needed)).toEqual([1, 1, 2, 16, 17]);
-  });
-
-  it('is divided more finely for a vibration, up to sixteen parts', () => {
-    const parts = (vibration: number): number => stepParts(0.001, {rate: vibration, vibration});
-
-    expect([50, 150, 151, 300, 5000].map(parts)).toEqual([1, 1, 2, 2, 16]);
   });
 });

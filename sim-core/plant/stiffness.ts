@@ -6,9 +6,6 @@ export const MOST_PARTS = 16;
 /** Steepest fall of the grip 1/(1 + z²) over z: 3·√3/8. */
 const STEEPEST_GRIP = 0.649519052838329;
 
-/** Turning of the fastest vibration within a part of a step [rad] at most, for its phase to stay right. */
-const FINE = 0.15;
-
 /** How fast a plant can be at a modulus, over every radius from the core to the largest. */
 export interface Pace {
   /** Upper bound of the fastest rate [1/s]. */
@@ -46,13 +43,8 @@ export function neededParts(plantStepS: number, {rate}: Pace): number {
   return Math.max(1, ceiling(plantStepS * rate));
 }
 
-/** Into how many it is divided: finer where a vibration asks for it, at most MOST_PARTS. */
-export function stepParts(plantStepS: number, pace: Pace): number {
-  const fine = Math.min(MOST_PARTS, ceiling((plantStepS * pace.vibration) / FINE));
-  return Math.max(neededParts(plantStepS, pace), fine);
-}
-
-function ceiling(value: number): number {
+/** The whole number at or above `value`, to within rounding. */
+export function ceiling(value: number): number {
   return -Math.floor(-(value - 1e-9));
 }
 

@@ -5,14 +5,14 @@ export const BYTES: {
 } = {
   engine: 1,
   hashes: {
-    a: '68858206e89bcf9c',
-    b: '75c4388cde0890f6',
-    c: '46e27e48a91653ae',
-    d: '41b180a7b909ce94',
-    e: 'c50927e4818f1cb8',
-    f: 'ef0796619aaff843',
-    g: 'b331997c04745fda',
-    noise: '0f009fd91f7b0acf',
-    live: 'ba45c97173e338c3',
+    a: '7895a02aaaeab90a',
+    b: '1271835636d25cef',
+    c: 'f965fd3099177ee2',
+    d: '88c4b13e301315d2',
+    e: 'e3f1e408cf531083',
+    f: 'a758ecf9a8a4d6b6',
+    g: '93db76bc038d77ba',
+    noise: 'c33a12baf5d22e53',
+    live: 'a8ff85e579790362',
   },
 };
