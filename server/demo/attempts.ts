@@ -1,7 +1,7 @@
 import {type Entry} from '#shared/attempts/attempt';
 import {type Caller} from '../caller';
 import {newId} from '../db/new-id';
-import {AttemptLogService} from '../features/attempts/attempt-log-service';
+import {AttemptLogService} from '../features/attempts/log/attempt-log-service';
 import {AttemptReadService} from '../features/attempts/attempt-read-service';
 import {AttemptService} from '../features/attempts/attempt-service';
 import {ExerciseService} from '../features/exercises/exercise-service';

@@ -14,7 +14,7 @@ import {type Feature} from '../../feature';
 import {mount} from '../../http/mount';
 import {AttemptBatchEntity} from './attempt-batch-entity';
 import {AttemptEntity} from './attempt-entity';
-import {AttemptLogService} from './attempt-log-service';
+import {AttemptLogService} from './log/attempt-log-service';
 import {AttemptReadService} from './attempt-read-service';
 import {AttemptResultEntity} from './attempt-result-entity';
 import {AttemptService} from './attempt-service';
