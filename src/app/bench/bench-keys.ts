@@ -1,6 +1,16 @@
-import {ChangeDetectionStrategy, Component, inject, signal} from '@angular/core';
+import {ChangeDetectionStrategy, Component, output, signal} from '@angular/core';
 import {MatButtonModule} from '@angular/material/button';
-import {BenchStore} from './bench-store';
+
+export type BenchKey = 'start' | 'stop' | 'pause' | 'step' | 'thread' | 'again';
+
+const KEYS: Readonly<Record<string, {readonly key: BenchKey; readonly does: string}>> = {
+  S: {key: 'start', does: 'start the line, or change its speed'},
+  X: {key: 'stop', does: 'stop the line'},
+  P: {key: 'pause', does: 'pause and go on'},
+  '.': {key: 'step', does: 'one step, while paused'},
+  T: {key: 'thread', does: 'thread again, after a break'},
+  A: {key: 'again', does: 'same again, from the beginning'},
+};
 
 /** Keyboard shortcuts of the Bench, and the sheet that names them. */
 @Component({
@@ -31,7 +41,7 @@ import {BenchStore} from './bench-store';
       display: grid;
       grid-template-columns: auto 1fr;
       gap: 0.35rem 0.9rem;
-      width: 15rem;
+      width: 17rem;
       margin: 0.25rem 0 0;
       padding: 0.9rem;
     }
@@ -50,44 +60,18 @@ import {BenchStore} from './bench-store';
   host: {'(document:keydown)': 'press($event)'},
 })
 export class BenchKeys {
-  private readonly store = inject(BenchStore);
+  readonly pressed = output<BenchKey>();
 
   protected readonly isOpen = signal(false);
-  protected readonly keys = [
-    {name: 'S', does: 'start the line'},
-    {name: 'X', does: 'stop the line'},
-    {name: 'P', does: 'pause and go on'},
-    {name: '.', does: 'one step, while paused'},
-    {name: 'T', does: 'thread again'},
-    {name: 'A', does: 'same again'},
-  ];
+  protected readonly keys = Object.entries(KEYS).map(([name, {does}]) => ({name, does}));
 
   protected press(event: KeyboardEvent): void {
-    const {target} = event;
+    if (event.key === 'Escape') this.isOpen.set(false);
     const isTyping =
-      target instanceof HTMLElement && target.closest('input, textarea, select') !== null;
-    if (isTyping || event.ctrlKey || event.metaKey || event.altKey) return;
-    const {run} = this.store;
-    const isRunning = run.outcome().kind === 'running';
-    switch (event.key.toLowerCase()) {
-      case 's':
-        if (isRunning) void this.store.command({command: 'run', speedMps: 2, rampS: 10});
-        break;
-      case 'x':
-        if (isRunning) void this.store.command({command: 'stop', rampS: 4});
-        break;
-      case 'p':
-        this.store.togglePause();
-        break;
-      case '.':
-        if (run.pauseReason() !== null) void run.advance(1);
-        break;
-      case 't':
-        if (!isRunning) void this.store.threadAgain();
-        break;
-      case 'a':
-        void this.store.sameAgain();
-        break;
-    }
+      event.target instanceof HTMLElement &&
+      event.target.closest('input, textarea, select, [contenteditable]') !== null;
+    if (isTyping || event.repeat || event.ctrlKey || event.metaKey || event.altKey) return;
+    const found = KEYS[event.key.toUpperCase()];
+    if (found !== undefined) this.pressed.emit(found.key);
   }
 }

@@ -8,12 +8,13 @@ import {
   numberAttribute,
   type OnInit,
   signal,
+  viewChild,
 } from '@angular/core';
 import {MatButtonModule} from '@angular/material/button';
-import {MatButtonToggleModule} from '@angular/material/button-toggle';
 import {MatSlideToggleModule} from '@angular/material/slide-toggle';
 import {eventWords} from '#shared/wording/run';
 import {written} from '#shared/units';
+import {settingName} from '#shared/wording/settings';
 import {Figures} from '../live-run/figures/figures';
 import {LinePanel} from '../live-run/line-panel/line-panel';
 import {SettingsPanel} from '../live-run/settings-panel/settings-panel';
@@ -22,11 +23,17 @@ import {TrendChart} from '../live-run/trend-chart/trend-chart';
 import {WebPath} from '../live-run/web-path/web-path';
 import {BuildCheck} from '../platform/build-check';
 import {Session} from '../session/session';
-import {BenchKeys} from './bench-keys';
-import {BenchStore, type RollSize} from './bench-store';
+import {type BenchKey, BenchKeys} from './bench-keys';
+import {BenchStore} from './bench-store';
 import {FirstSteps} from './first-steps';
+import {type RollSize} from './set-ups';
 
 const KEEP_EVERY_MS = 2000;
+const SIZES: readonly {readonly key: RollSize; readonly name: string}[] = [
+  {key: 'small', name: 'Small roll'},
+  {key: 'half', name: 'Half roll'},
+  {key: 'full', name: 'Full roll'},
+];
 
 /** The sandbox: the stand, its trends, its settings, and a line to run. */
 @Component({
@@ -39,7 +46,6 @@ const KEEP_EVERY_MS = 2000;
     FirstSteps,
     LinePanel,
     MatButtonModule,
-    MatButtonToggleModule,
     MatSlideToggleModule,
     SettingsPanel,
     TimePanel,
@@ -64,7 +70,8 @@ export class BenchPage implements OnInit {
   protected readonly run = this.store.run;
   protected readonly units = this.session.units;
   protected readonly showsTruth = signal(false);
-  protected readonly sizes: readonly RollSize[] = ['small', 'half', 'full'];
+  private readonly linePanel = viewChild(LinePanel);
+  protected readonly sizes = SIZES;
   protected readonly setPointN = computed(
     () => (this.run.settings()['setPointN'] ?? 200) as number,
   );
@@ -89,6 +96,21 @@ export class BenchPage implements OnInit {
   protected readonly stands = computed(() => this.run.readOuts()?.lineStands ?? true);
   protected readonly isOver = computed(() => this.run.outcome().kind !== 'running');
   protected readonly ending = computed(() => this.describeEnding());
+  /** Why the last act was not done. */
+  protected readonly refusals = computed(() =>
+    this.run.faults().map(({path, allowed}) => {
+      const key = path.split('.').at(-1) ?? path;
+      return `Not done: ${settingName(key)} allows ${allowed}.`;
+    }),
+  );
+  protected readonly couldNotStart = computed(
+    () => this.run.faults().length > 0 || this.run.failure() !== null,
+  );
+  protected readonly keptText = computed(() => {
+    const acts = this.run.entries().length;
+    const seconds = Math.round(this.run.readOuts()?.tS ?? 0);
+    return `Your last run is here: ${seconds} s, ${acts} ${acts === 1 ? 'act' : 'acts'}.`;
+  });
   /** What screen readers hear: events, not numbers. */
   protected readonly spoken = computed(() => {
     const last = this.run.events().at(-1);
@@ -113,9 +135,19 @@ export class BenchPage implements OnInit {
     void this.open();
   }
 
+  /** A hidden tab gets no frames: time stands, and stays so until somebody goes on. */
   protected pauseWhenHidden(): void {
     if (document.hidden && this.run.pauseReason() === null) this.run.halt('tabHidden');
-    else if (!document.hidden && this.run.pauseReason() === 'tabHidden') this.run.resume();
+  }
+
+  protected obey(key: BenchKey): void {
+    const isOver = this.isOver();
+    if (key === 'start' && !isOver) this.linePanel()?.giveRun();
+    else if (key === 'stop' && !isOver && !this.stands()) this.linePanel()?.giveStop();
+    else if (key === 'pause') this.store.togglePause();
+    else if (key === 'step' && this.run.pauseReason() !== null) void this.run.advance(1);
+    else if (key === 'thread' && isOver) void this.store.threadAgain();
+    else if (key === 'again') void this.store.sameAgain();
   }
 
   private async open(): Promise<void> {

@@ -1,22 +1,30 @@
 import {computed, inject, Injectable, signal} from '@angular/core';
-import {type Act, type LineCommand, type LiveSettings, type Scenario} from '#sim-core/index';
+import {
+  type Act,
+  type LineCommand,
+  type LiveSettings,
+  type LogEntry,
+  type Scenario,
+} from '#sim-core/index';
 import {LiveRun} from '../live-run/live-run';
-import {KeptHere} from './kept-here';
-import {COATER_1, type SetUp, withRadius} from './set-ups';
+import {KeptHere, type KeptRun} from './kept-here';
+import {COATER_1, type RollSize, withRadius} from './set-ups';
 
-export type RollSize = keyof SetUp['radii'];
-
-/** The free Bench: one run at a time, kept on this device until the next one. */
+/** The free Bench: one run at a time, kept on this device until the next one; the one before can be had back. */
 @Injectable()
 export class BenchStore {
   private readonly kept = inject(KeptHere);
-  readonly run = new LiveRun(() => this.keep());
+  readonly run: LiveRun = new LiveRun((entry) => this.keep([...this.run.entries(), entry]));
 
-  private readonly size = signal<RollSize>('full');
+  private readonly size = signal<RollSize>('half');
   readonly setUp = signal(COATER_1).asReadonly();
   readonly rollSize = this.size.asReadonly();
-  /** What the next run starts with: the settings that were found stay. */
+  /** What this run started with. */
   private readonly startedWith = signal<Scenario>(COATER_1.scenario);
+  private readonly before = signal<KeptRun | null>(null);
+  private readonly isTakenUp = signal(false);
+  /** Runs that tests ask for are not kept: they would push out a person's own. */
+  private keepsRuns = true;
 
   readonly isReady = computed(() => this.run.document() !== null);
   readonly hasStarted = computed(() => this.gave('run'));
@@ -25,23 +33,26 @@ export class BenchStore {
     ...(this.hasStarted() ? ['Starting'] : []),
     ...(this.hasStopped() ? ['Stopping', 'Standstill'] : []),
   ]);
+  /** Whether a run of an earlier visit stands here and nobody has said yet what to do with it. */
+  readonly offersToGoOn = computed(
+    () => this.isTakenUp() && this.run.pauseReason() === 'notStarted',
+  );
+  /** Whether the run before this one can be had back. */
+  readonly canGoBack = computed(() => this.before() !== null && this.run.entries().length === 0);
 
   /** Begins where this device left off, or with the set-up. */
   async open(seed: number | null): Promise<void> {
+    this.keepsRuns = seed === null;
     const kept = seed === null ? this.kept.read() : null;
-    if (kept !== null) {
-      this.startedWith.set(kept.document);
-      this.size.set(kept.rollSize);
-      // A document that an older build kept and this one refuses starts anew.
-      if (await this.run.start(kept)) return;
-    }
+    // A document that an older build kept and this one refuses starts anew.
+    if (kept !== null && kept.entries.length > 0 && (await this.takeUp(kept))) return;
     const {scenario} = this.setUp();
     await this.begin(seed === null ? scenario : {...scenario, seed});
   }
 
+  /** The next step of settings; time stands until the line is started. */
   async act(act: Act): Promise<void> {
     await this.run.act(act);
-    if (this.run.pauseReason() === 'notStarted') this.run.resume();
   }
 
   change(set: LiveSettings): Promise<void> {
@@ -53,20 +64,33 @@ export class BenchStore {
     return this.act({line});
   }
 
-  togglePause(): void {
-    if (this.run.pauseReason() === null) this.run.halt('byPerson');
-    else this.run.resume();
+  goOn(): void {
+    this.run.resume();
+    this.isTakenUp.set(false);
   }
 
-  /** The same stand, settings and seed again, from the beginning. */
+  togglePause(): void {
+    if (this.run.pauseReason() === null) this.run.halt('byPerson');
+    else this.goOn();
+  }
+
+  /** The set-up as it was delivered; the run so far can be had back. */
+  startAfresh(): Promise<void> {
+    this.size.set('half');
+    return this.begin(this.setUp().scenario);
+  }
+
+  /** The same roll and seed from the beginning, with the settings as they are now. */
   sameAgain(): Promise<void> {
-    return this.begin(this.startedWith());
+    return this.begin(this.withSettingsNow());
   }
 
   /** Threads the web again after a break: same settings as now, the roll as it is. */
   threadAgain(): Promise<void> {
-    const view = this.run.view;
-    const radiusM = Math.max(view?.radiusM ?? 0, this.startedWith().roll.coreRadiusM * 1.05);
+    const {coreRadiusM} = this.startedWith().roll;
+    const leftM = this.run.view?.radiusM ?? 0;
+    const isEmpty = leftM < coreRadiusM * 1.05;
+    const radiusM = isEmpty ? this.setUp().radii[this.size()] : leftM;
     return this.begin(withRadius(this.withSettingsNow(), radiusM));
   }
 
@@ -75,9 +99,33 @@ export class BenchStore {
     return this.begin(withRadius(this.withSettingsNow(), this.setUp().radii[size]));
   }
 
+  /** Takes the run before this one up again, where it was left. */
+  async goBack(): Promise<void> {
+    const before = this.before();
+    if (before === null) return;
+    this.before.set(null);
+    await this.takeUp(before);
+  }
+
+  /** Notes how far the run is; called now and then, and when the page is left. */
+  keepNow(): void {
+    if (this.isReady()) void this.keep(this.run.entries());
+  }
+
   private async begin(document: Scenario): Promise<void> {
+    const entries = this.run.entries();
+    if (this.isReady() && entries.length > 0) this.before.set(this.runSoFar(entries));
     this.startedWith.set(document);
-    if (await this.run.start({document})) await this.keep();
+    this.isTakenUp.set(false);
+    if (await this.run.start({document})) await this.keep([]);
+  }
+
+  private async takeUp(kept: KeptRun): Promise<boolean> {
+    if (!(await this.run.start(kept))) return false;
+    this.startedWith.set(kept.document);
+    this.size.set(kept.rollSize);
+    this.isTakenUp.set(true);
+    return true;
   }
 
   /** The document as it would start now: what was set while it ran stays. */
@@ -97,19 +145,18 @@ export class BenchStore {
       .some((entry) => entry.kind === 'line' && entry.line.command === command);
   }
 
-  private keep(): Promise<void> {
-    this.kept.write({
+  private runSoFar(entries: readonly LogEntry[]): KeptRun {
+    return {
       document: this.startedWith(),
-      entries: this.run.entries(),
+      entries,
       throughTick: this.run.view?.tick ?? 0,
       rollSize: this.size(),
-    });
-    return Promise.resolve();
+    };
   }
 
-  /** Notes how far the run is; called now and then, and when the page is left. */
-  keepNow(): void {
-    void this.keep();
+  private keep(entries: readonly LogEntry[]): Promise<void> {
+    if (this.keepsRuns) this.kept.write(this.runSoFar(entries));
+    return Promise.resolve();
   }
 }
 

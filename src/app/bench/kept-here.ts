@@ -1,7 +1,7 @@
 import {inject, Injectable} from '@angular/core';
 import {type LogEntry, type Scenario} from '#sim-core/index';
 import {Session} from '../session/session';
-import {type RollSize} from './bench-store';
+import {type RollSize} from './set-ups';
 
 /** A run of the free Bench as this device keeps it. */
 export interface KeptRun {

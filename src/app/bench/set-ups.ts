@@ -10,14 +10,18 @@ export interface SetUp {
   readonly scenario: Scenario;
 }
 
+export type RollSize = keyof SetUp['radii'];
+
 /**
- * An invented paper coater. Data: common practice, no source. It starts at its own equilibrium: the holding
- * brake holds the initial tension at rest (150 N × 0.5 m = 75 N·m, which 30 % of the brake gives).
+ * An invented paper coater with a half roll. Data: common practice, no source. It starts at its own equilibrium:
+ * the holding brake holds the initial tension at rest (150 N × 0.25 m = 37.5 N·m, which 15 % of the brake gives).
+ * The half roll hunts from a gain of about 2, the small one from about 0.8: half of the edge found on the one is
+ * past the edge of the other.
  */
 export const COATER_1: SetUp = {
   key: 'coater-1',
   title: 'Coater 1, unwind',
-  summary: '100 µm paper, 1.0 m wide, powder brake, load cell',
+  summary: '100 µm paper, 1.0 m wide, air brake, load cell',
   radii: {small: 0.1, half: 0.25, full: 0.5},
   scenario: {
     format: SCENARIO_FORMAT,
@@ -36,7 +40,7 @@ export const COATER_1: SetUp = {
     },
     roll: {
       coreRadiusM: 0.05,
-      radiusM: 0.5,
+      radiusM: 0.25,
       coreInertiaKgM2: 0.4,
       woundTensionN: 100,
       coulombNm: 0.5,
@@ -47,21 +51,21 @@ export const COATER_1: SetUp = {
       maxTorqueNm: 250,
       residualTorqueNm: 1.5,
       lagS: 0.2,
-      deadTimeS: 0.03,
+      deadTimeS: 0.1,
       capacityJPerK: 5000,
       conductanceWPerK: 6.67,
     },
     sensing: {kind: 'loadCell', rangeN: 500, filterS: 0.1, noiseN: 0.5},
     controller: {
-      kp: 0.1,
-      tiS: 0.5,
+      kp: 0.3,
+      tiS: 0.6,
       setPointN: 200,
       startRampS: 4,
       startFraction: 0.7,
-      standstillPct: 30,
+      standstillPct: 15,
       stopHoldS: 6,
       stopHoldGain: 1,
-      radiusRefM: 0.5,
+      radiusRefM: 0.25,
     },
     line: [],
     actions: [],

@@ -7,6 +7,7 @@ import {
   type Outcome,
   type Phase,
   type RunEvent,
+  type RunHash,
   type RunView,
   type Scenario,
 } from '#sim-core/index';
@@ -158,6 +159,12 @@ export class LiveRun {
     }
   }
 
+  /** Fingerprint of the run so far; null when there is none. */
+  async hash(): Promise<RunHash | null> {
+    const answer = await this.ask({kind: 'hash'});
+    return answer?.kind === 'hashed' ? answer.hash : null;
+  }
+
   /** Calls back at each frame with the newest view; returns how to stop it. */
   onFrame(callback: (view: RunView) => void): () => void {
     this.frameCallbacks.add(callback);
@@ -239,5 +246,12 @@ function isSame(
   other: Readonly<Record<string, unknown>>,
 ): boolean {
   const keys = Object.keys(one);
-  return keys.length === Object.keys(other).length && keys.every((key) => one[key] === other[key]);
+  return (
+    keys.length === Object.keys(other).length && keys.every((key) => isEqual(one[key], other[key]))
+  );
+}
+
+/** A list (gain by diameter) comes as a new copy each time. */
+function isEqual(one: unknown, other: unknown): boolean {
+  return one === other || (Array.isArray(one) && JSON.stringify(one) === JSON.stringify(other));
 }

@@ -78,7 +78,7 @@ export function figuresOf(
       : show('On target by', 'time', onTarget),
     show('In tolerance', 'share', shareInTolerance(rows, span, band)),
     show('Loop', 'loop', loop, (loop?.value ?? 0) > 0),
-    show('Brake movement, per s', 'percent', brakeMovement(rows, span, SAMPLE_S)),
+    show('Brake movement', 'percent', brakeMovement(rows, span, SAMPLE_S)),
     show('Time at the limit', 'time', timeAtLimitS(rows, span, yardstick, SAMPLE_S)),
   ];
   const isStop = since?.kind === 'line' && since.line.command !== 'run';

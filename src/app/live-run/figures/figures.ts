@@ -29,14 +29,16 @@ import {figuresOf, lastAct, type Yardstick} from './figures-of';
     }
     dl {
       display: grid;
-      grid-template-columns: repeat(auto-fill, minmax(7.5rem, 1fr));
-      gap: 0.6rem 1rem;
-      margin: 0.4rem 0 0;
-      padding-top: 0.6rem;
+      grid-template-columns: repeat(auto-fit, minmax(6.4rem, 1fr));
+      gap: 0.4rem 0.75rem;
+      margin: 0.25rem 0 0;
+      padding-top: 0.4rem;
       border-top: 1px solid var(--rule);
     }
     dt {
-      font-size: 0.85rem;
+      color: var(--muted);
+      font-size: 0.82rem;
+      line-height: 1.2;
     }
     dd {
       margin: 0;
@@ -44,6 +46,10 @@ import {figuresOf, lastAct, type Yardstick} from './figures-of';
     .number {
       font-size: 1.1rem;
       font-weight: 600;
+    }
+    .muted {
+      margin-left: 0.3em;
+      font-size: 0.9rem;
     }
     .out .number {
       color: var(--vermilion);
@@ -57,8 +63,15 @@ export class Figures {
   readonly units = input<UnitSystem>('si');
 
   private readonly since = computed(() => lastAct(this.run().entries()));
+  /** Changes whenever figures are due: the longer the span, the rarer, as each looks at every row of it. */
+  private readonly pace = computed(() => {
+    const tick = this.run().readOuts()?.tick ?? 0;
+    const rows = tick - (this.since()?.tick ?? 0);
+    const every = rows < 3000 ? 20 : rows < 12_000 ? 100 : 500;
+    return this.run().pauseReason() === null ? Math.floor(tick / every) : -tick;
+  });
   protected readonly figures = computed(() => {
-    this.run().readOuts(); // five times a second
+    this.pace();
     return figuresOf(this.run().trace, this.since(), this.yardstick(), this.units());
   });
   protected readonly title = computed(() => {

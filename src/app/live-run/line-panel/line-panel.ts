@@ -52,7 +52,7 @@ export class LinePanel {
   );
   protected readonly startS = linkedSignal(() => within(this.run()?.rampS, this.first().startS));
   protected readonly stopS = linkedSignal(() => within(this.stop()?.rampS, this.first().stopS));
-  private readonly fastStopS = linkedSignal(() =>
+  protected readonly fastStopS = linkedSignal(() =>
     within(this.fastStop()?.rampS, this.first().fastStopS),
   );
 
@@ -76,15 +76,15 @@ export class LinePanel {
     this.speedMps.set(fromPerson('speed', shown, this.units()));
   }
 
-  protected giveRun(): void {
+  giveRun(): void {
     this.commanded.emit({command: 'run', speedMps: this.speedMps(), rampS: this.startS()});
   }
 
-  protected giveStop(): void {
+  giveStop(): void {
     this.commanded.emit({command: 'stop', rampS: this.stopS()});
   }
 
-  protected giveFastStop(): void {
+  giveFastStop(): void {
     this.commanded.emit({command: 'fastStop', rampS: this.fastStopS()});
   }
 }

@@ -39,6 +39,8 @@ export class PlantHost {
         return this.acted(this.started().note(message.note));
       case 'end':
         return this.acted(this.started().note({kind: 'end', hash: this.started().hash()}));
+      case 'hash':
+        return {kind: 'hashed', hash: this.started().hash()};
       case 'advance':
         return this.advance(message.ticks);
     }

@@ -5,6 +5,7 @@ import {
   type Note,
   type Outcome,
   type RunEvent,
+  type RunHash,
   type RunView,
   type Scenario,
   type TraceBlock,
@@ -27,6 +28,7 @@ export type ToPlant =
   | {readonly kind: 'note'; readonly note: Note}
   /** Hands in: an `end` entry with the hash of the run so far. */
   | {readonly kind: 'end'}
+  | {readonly kind: 'hash'}
   | {readonly kind: 'advance'; readonly ticks: number};
 
 /** Where the run stands, with every answer. `events` are the new ones. */
@@ -45,4 +47,5 @@ export type FromPlant =
   | {readonly kind: 'started'; readonly standing: Standing; readonly trace: Rows}
   | {readonly kind: 'acted'; readonly standing: Standing; readonly entry: LogEntry}
   | {readonly kind: 'rows'; readonly standing: Standing; readonly trace: Rows}
+  | {readonly kind: 'hashed'; readonly hash: RunHash}
   | {readonly kind: 'refused'; readonly faults: readonly Fault[]};

@@ -2,7 +2,7 @@ import {ChangeDetectionStrategy, Component, computed, input, output, signal} fro
 import {MatButtonModule} from '@angular/material/button';
 import {MatSlideToggleModule} from '@angular/material/slide-toggle';
 import {FIELDS, type LiveSettings, type Scenario} from '#sim-core/index';
-import {fromPerson, toPerson, unitName, type UnitSystem} from '#shared/units';
+import {fromPerson, toPerson, unitName, type UnitSystem, written} from '#shared/units';
 import {SETTING_WORDS, settingMeaning} from '#shared/wording/settings';
 import {NumberField} from '../../ui/number-field';
 import {FIRST_KEYS, SETTING_GROUPS} from './setting-groups';
@@ -93,7 +93,7 @@ export class SettingsPanel {
   }
 
   private lockOf(key: string): string {
-    if (this.areFixed()) return 'Fixed now.';
+    if (this.areFixed()) return 'The run is over.';
     const allowed = this.allowed();
     return allowed !== null && !(key in allowed) ? 'Fixed in this exercise.' : '';
   }
@@ -118,9 +118,16 @@ export class SettingsPanel {
         step: words.step === 'factor' ? 'factor' : Math.abs(shown(words.step) - shown(0)),
         canBeOff: words.canBeOff === true && this.allowed()?.[key]?.lowest === undefined,
         lockedBecause: this.lockOf(key),
-        hint: settingMeaning(key, stored, facts, this.units()),
+        hint: this.perWidth(key, stored) + settingMeaning(key, stored, facts, this.units()),
       },
     ];
+  }
+
+  /** Tension per width: the job card says the one, the controller the other. */
+  private perWidth(key: string, tensionN: number): string {
+    if (key !== 'setPointN') return '';
+    const perWidth = tensionN / this.document().web.widthM;
+    return `${written('tensionPerWidth', perWidth, this.units())} of width. `;
   }
 
   /** Range that is allowed here [SI]. */

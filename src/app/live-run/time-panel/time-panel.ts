@@ -11,10 +11,11 @@ import {type PauseReason} from '../live-run';
       <button
         matButton="outlined"
         type="button"
-        [disabled]="reason() === 'over'"
+        class="pause"
+        [disabled]="reason() === 'over' || reason() === 'notStarted'"
         (click)="pauseToggled.emit()"
       >
-        {{ reason() === null ? 'Pause' : 'Go on' }}
+        {{ reason() === null || reason() === 'notStarted' ? 'Pause' : 'Go on' }}
       </button>
     }
     @if (canStep()) {
@@ -46,6 +47,12 @@ import {type PauseReason} from '../live-run';
       flex-wrap: wrap;
       gap: 0.5rem;
       align-items: center;
+    }
+    button {
+      --mat-button-outlined-horizontal-padding: 0.9rem;
+    }
+    .pause {
+      min-width: 5rem;
     }
   `,
   imports: [MatButtonModule, MatButtonToggleModule],

@@ -1,17 +1,20 @@
 import {COLUMN, TRACE_COLUMNS, type TraceColumn} from '#sim-core/index';
 import {type Rows} from '../plant/run-messages';
-import {MinMaxPyramid} from './min-max-pyramid';
+import {MinMaxPyramid, type PointBuffer} from './min-max-pyramid';
 
 /** Kept as they came: measures are computed from these. */
 const EXACT: readonly TraceColumn[] = ['tensionN', 'measuredN', 'setPointN', 'outputPct'];
+/** Columns that are drawn: the others need no pyramid. */
+const DRAWN: readonly TraceColumn[] = [...EXACT, 'lineMps', 'radiusM'];
 const FIRST_ROWS = 6000; // a minute at 10 ms
+const WIDTH = TRACE_COLUMNS.length;
 
 type Column = Float64Array | Float32Array | Uint8Array;
 
 /** The whole run, one row a tick, growing by doubling: 61 B a row, 21 MiB an hour at 10 ms. */
 export class TraceStore {
-  private columns = new Map<TraceColumn, Column>();
-  private pyramids = new Map<TraceColumn, MinMaxPyramid>();
+  private columns: Column[] = [];
+  private pyramids: (MinMaxPyramid | null)[] = [];
   private room = 0;
   /** Rows stored; row r is tick r. */
   count = 0;
@@ -23,21 +26,21 @@ export class TraceStore {
   clear(): void {
     this.count = 0;
     this.room = FIRST_ROWS;
-    this.columns = new Map(TRACE_COLUMNS.map((name) => [name, makeColumn(name, FIRST_ROWS)]));
-    this.pyramids = new Map(TRACE_COLUMNS.map((name) => [name, new MinMaxPyramid()]));
+    this.columns = TRACE_COLUMNS.map((name) => makeColumn(name, FIRST_ROWS));
+    this.pyramids = TRACE_COLUMNS.map((name) =>
+      DRAWN.includes(name) ? new MinMaxPyramid() : null,
+    );
   }
 
   append({rows, count}: Rows): void {
     while (this.count + count > this.room) this.grow();
-    const width = TRACE_COLUMNS.length;
-    for (const name of TRACE_COLUMNS) {
-      const column = this.columns.get(name)!;
-      const pyramid = this.pyramids.get(name)!;
-      const place = COLUMN[name];
+    for (let place = 0; place < WIDTH; place++) {
+      const column = this.columns[place]!;
+      const pyramid = this.pyramids[place] ?? null;
       for (let row = 0; row < count; row++) {
-        const value = rows[row * width + place]!;
+        const value = rows[row * WIDTH + place]!;
         column[this.count + row] = value;
-        pyramid.add(value);
+        pyramid?.add(value);
       }
     }
     this.count += count;
@@ -46,41 +49,37 @@ export class TraceStore {
   /** Value of a column in a row; NaN outside the rows stored. */
   at(row: number, name: TraceColumn): number {
     if (row < 0 || row >= this.count) return NaN;
-    return this.columns.get(name)![row]!;
+    return this.columns[COLUMN[name]]![row]!;
   }
 
   /**
-   * Points to draw from row `from` up to `to` (excluded): at most about `most` rows and values, lowest and
-   * highest of each stretch in turn, so that no peak is lost.
+   * Fills points to draw from row `from` up to `to` (excluded): the rows themselves, or the lowest and highest
+   * of each stretch in turn, so that no peak is lost; as many as the buffer takes. Returns how many.
    */
-  points(
-    name: TraceColumn,
-    from: number,
-    to: number,
-    most: number,
-  ): {rows: number[]; values: number[]} {
+  fill(name: TraceColumn, from: number, to: number, into: PointBuffer): number {
     const first = Math.max(0, from);
     const end = Math.min(this.count, to);
-    const level = MinMaxPyramid.levelFor(end - first, most);
-    if (level !== null) return this.pyramids.get(name)!.points(level, first, end);
+    const pyramid = this.pyramids[COLUMN[name]] ?? null;
+    // two points at the ends may be more than fit evenly
+    const level = MinMaxPyramid.levelFor(end - first, into.rows.length - 4);
+    if (level !== null && pyramid !== null) return pyramid.fill(level, first, end, into);
 
-    const column = this.columns.get(name)!;
-    const rows: number[] = [];
-    const values: number[] = [];
-    for (let row = first; row < end; row++) {
-      rows.push(row);
-      values.push(column[row]!);
+    const column = this.columns[COLUMN[name]]!;
+    const most = Math.min(end - first, into.rows.length);
+    for (let place = 0; place < most; place++) {
+      into.rows[place] = first + place;
+      into.values[place] = column[first + place]!;
     }
-    return {rows, values};
+    return Math.max(0, most);
   }
 
   private grow(): void {
     this.room *= 2;
-    for (const [name, old] of this.columns) {
+    this.columns = TRACE_COLUMNS.map((name, place) => {
       const column = makeColumn(name, this.room);
-      column.set(old);
-      this.columns.set(name, column);
-    }
+      column.set(this.columns[place]!);
+      return column;
+    });
   }
 }
 

@@ -7,35 +7,30 @@ import {
   ElementRef,
   inject,
   input,
-  linkedSignal,
   signal,
   untracked,
+  viewChild,
   viewChildren,
 } from '@angular/core';
 import {MatButtonModule} from '@angular/material/button';
 import {MatButtonToggleModule} from '@angular/material/button-toggle';
-import {type TraceColumn} from '#sim-core/index';
-import {formatted, type Quantity, toPerson, unitName, type UnitSystem} from '#shared/units';
-import type uPlot from 'uplot';
+import {type Quantity, unitName, type UnitSystem} from '#shared/units';
 import {type LiveRun} from '../live-run';
+import {listenForLookBack} from './look-back';
+import {AXIS_PX} from './make-plot';
 import {onThemeChange, type Palette, readPalette} from './palette';
-import {
-  drawBand,
-  drawMarks,
-  drawNumbers,
-  drawPhases,
-  marksOf,
-  type PlaceNumber,
-} from './trend-marks';
-import {makePlot, type PlotSpec} from './trend-plots';
+import {readingsAt} from './readings';
+import {marksOf, type PlaceNumber} from './trend-marks';
+import {TrendPlots} from './trend-plots';
+import {phaseSpans, SAMPLE_S, type TrendScene} from './trend-scene';
 
-const SAMPLE_S = 0.01;
-/** More points than pixels help nobody. */
-const MOST_POINTS = 1600;
-const HEIGHTS_PX = [190, 96, 112] as const;
-const NARROW_HEIGHTS_PX = [150, 76, 92] as const;
+/** Below this width [px] traces have no names beside them: the readings name them. */
+const NAMES_FROM_PX = 620;
+/** Least time between two live drawings [ms]: 30 a second are enough for the eye. */
+const DRAW_EVERY_MS = 30;
+const LEAST_WINDOW_S = 10;
 
-/** Tension, brake output and line speed on one time axis, live; holds still on request to look back. */
+/** Tension, brake output and line speed on one time axis, live; drag it to look back while the run goes on. */
 @Component({
   selector: 'app-trend-chart',
   templateUrl: './trend-chart.html',
@@ -58,61 +53,46 @@ export class TrendChart {
   readonly firstWindowS = input<number | 'all'>(60);
 
   private readonly host = inject<ElementRef<HTMLElement>>(ElementRef);
+  private readonly area = viewChild.required<ElementRef<HTMLElement>>('area');
   private readonly hosts = viewChildren<ElementRef<HTMLElement>>('plot');
 
-  protected readonly windowS = linkedSignal(() => {
-    const first = this.firstWindowS();
-    return first === 'all' ? Math.max(10, Math.ceil(this.run().trace.count * SAMPLE_S)) : first;
-  });
+  private readonly chosenLength = signal<number | 'all' | null>(null);
+  protected readonly windowLength = computed(() => this.chosenLength() ?? this.firstWindowS());
   protected readonly isAutoScale = signal(false);
-  /** End of the window while it is held [s]; null follows the run. */
+  /** End of the window while somebody looks back [s]; null follows the run. */
   protected readonly heldEndS = signal<number | null>(null);
-  protected readonly cursorS = signal<number | null>(null);
+  private readonly cursorS = signal<number | null>(null);
   protected readonly runLengthS = computed(() => this.run().readOuts()?.tS ?? 0);
-  protected readonly marks = computed(() =>
+  protected readonly windowS = computed(() => {
+    const length = this.windowLength();
+    return length === 'all' ? Math.max(LEAST_WINDOW_S, Math.ceil(this.runLengthS())) : length;
+  });
+  private readonly marks = computed(() =>
     marksOf(this.run().entries(), this.run().events(), this.units()),
   );
+  private readonly phases = computed(() => phaseSpans(this.run().events(), this.run().trace));
+  /** Values of all traces: under the cursor, else the newest. */
   protected readonly readings = computed(() => {
-    const atS = this.cursorS() ?? this.runLengthS();
-    const row = Math.min(this.run().trace.count - 1, Math.round(atS / SAMPLE_S));
+    const {trace} = this.run();
+    const atS = this.cursorS() ?? this.heldEndS() ?? this.runLengthS();
+    const row = Math.max(0, Math.min(trace.count - 1, Math.round(atS / SAMPLE_S)));
     return {
-      isCursor: this.cursorS() !== null,
-      time: `${Math.max(0, row * SAMPLE_S).toFixed(1)} s`,
-      values: this.columns().map((column) => ({
-        ...column,
-        ...formatted(
-          column.quantity,
-          this.run().trace.at(row, column.name) * (column.quantity === 'diameter' ? 2 : 1),
-          this.units(),
-        ),
-      })),
+      time: `${(row * SAMPLE_S).toFixed(1)} s`,
+      values: readingsAt(trace, row, this.units(), this.showsTruth()),
     };
   });
-  private readonly columns = computed(() => {
-    const all: {name: TraceColumn; label: string; quantity: Quantity; tone: keyof Palette}[] = [
-      {name: 'measuredN', label: 'measured', quantity: 'tension', tone: 'measured'},
-      {name: 'setPointN', label: 'set point', quantity: 'tension', tone: 'pine'},
-      {name: 'outputPct', label: 'brake output', quantity: 'percent', tone: 'output'},
-      {name: 'lineMps', label: 'line speed', quantity: 'speed', tone: 'ink'},
-      {name: 'radiusM', label: 'diameter', quantity: 'diameter', tone: 'muted'},
-    ];
-    if (this.showsTruth()) {
-      all.unshift({name: 'tensionN', label: 'true tension', quantity: 'tension', tone: 'ink'});
-    }
-    return all;
-  });
 
-  private plots: uPlot[] = [];
+  private plots: TrendPlots | null = null;
   private palette: Palette | null = null;
-  private isOddFrame = false;
+  private lastDrawnMs = 0;
   private topSpeedMps = 1;
-  private observedTopN = 0;
+  private namesTraces = true;
 
   constructor() {
     const destroyed = inject(DestroyRef);
     effect((onCleanup) => {
       if (this.hosts().length < 3) return;
-      this.showsTruth();
+      this.showsTruth(); // another set of traces
       untracked(() => this.build());
       onCleanup(() => this.dropPlots());
     });
@@ -121,14 +101,18 @@ export class TrendChart {
       onCleanup(stop);
     });
     effect(() => {
-      this.windowS();
-      this.isAutoScale();
-      this.heldEndS();
-      this.band();
-      this.marks();
-      this.numbers();
-      this.units();
+      this.scene();
+      this.runLengthS(); // a single step draws too
       untracked(() => this.draw());
+    });
+    effect((onCleanup) => {
+      const stop = listenForLookBack(this.area().nativeElement, {
+        secondsPerPx: () =>
+          this.windowS() / Math.max(1, this.area().nativeElement.clientWidth - AXIS_PX),
+        endS: () => this.endS(),
+        moveTo: (endS) => this.moveTo(endS),
+      });
+      onCleanup(stop);
     });
 
     const observer = new ResizeObserver(() => this.fit());
@@ -147,137 +131,89 @@ export class TrendChart {
     this.heldEndS.set(isHeld ? Math.max(this.windowS(), this.runLengthS()) : null);
   }
 
+  /** Looks back to a window that ends here; the end of the run follows it again. */
   protected moveTo(endS: number): void {
-    this.heldEndS.set(endS);
+    const newestS = Math.max(this.windowS(), this.runLengthS());
+    this.heldEndS.set(endS >= newestS ? null : Math.max(this.windowS(), endS));
+  }
+
+  protected chooseLength(length: number | 'all'): void {
+    this.chosenLength.set(length);
+    this.heldEndS.set(null);
   }
 
   protected unitOf(quantity: Quantity): string {
     return unitName(quantity, this.units());
   }
 
-  private colours = (): Palette => (this.palette ??= readPalette(this.host.nativeElement));
+  private readonly colours = (): Palette => (this.palette ??= readPalette(this.host.nativeElement));
+
+  /** What follows from inputs and acts; the window moves with the run. */
+  private readonly scene = computed(() => ({
+    trace: this.run().trace,
+    units: this.units(),
+    showsTruth: this.showsTruth(),
+    band: this.band(),
+    topN: this.isAutoScale() ? null : this.topN(),
+    largestRadiusM: this.largestRadiusM(),
+    marks: this.marks(),
+    numbers: this.numbers(),
+    phases: this.phases(),
+    windowS: this.windowS(),
+    heldEndS: this.heldEndS(),
+  }));
+
+  private sceneNow(): TrendScene {
+    const {windowS, ...scene} = this.scene();
+    const toS = this.endS();
+    // Only ever steps up while a run goes on: a scale that breathes cannot be read.
+    const speedMps = this.run().view?.lineTargetMps ?? 0;
+    if (scene.trace.count < 10) this.topSpeedMps = 1;
+    this.topSpeedMps = Math.max(this.topSpeedMps, Math.ceil(1.2 * speedMps));
+    return {
+      ...scene,
+      fromS: toS - windowS,
+      toS,
+      topSpeedMps: this.topSpeedMps,
+      namesTraces: this.namesTraces,
+    };
+  }
+
+  private endS(): number {
+    return this.heldEndS() ?? Math.max(this.windowS(), this.run().trace.count * SAMPLE_S);
+  }
 
   private build(): void {
     this.dropPlots();
-    const specs = this.specs();
-    this.plots = this.hosts().map((host, place) =>
-      makePlot(specs[place]!, host.nativeElement, this.colours, (seconds) =>
-        this.cursorS.set(seconds),
-      ),
+    const hosts = this.hosts().map(({nativeElement}) => nativeElement);
+    this.plots = new TrendPlots(hosts, this.sceneNow(), this.colours, (seconds) =>
+      this.cursorS.set(seconds),
     );
     this.fit();
   }
 
-  private specs(): PlotSpec[] {
-    const shown = (quantity: Quantity, si: number): number => toPerson(quantity, si, this.units());
-    const tension: PlotSpec = {
-      lines: [
-        {colour: 'pine', width: 1.5, dash: [6, 4]},
-        {colour: 'measured', width: 1.75},
-        ...(this.showsTruth() ? [{colour: 'ink' as const, width: 1.75}] : []),
-      ],
-      range: () => [0, shown('tension', this.isAutoScale() ? this.observedTopN : this.topN())],
-      showsTime: false,
-      topPx: 22,
-      drawBelow: (plot) => {
-        const band = this.band();
-        if (band === null) return;
-        const {lowest, highest} = band;
-        drawBand(
-          plot,
-          {lowest: shown('tension', lowest), highest: shown('tension', highest)},
-          this.colours(),
-        );
-      },
-      drawAbove: (plot) => {
-        drawPhases(plot, this.run().trace, SAMPLE_S, this.colours());
-        drawMarks(plot, this.marks(), SAMPLE_S, this.colours(), true);
-        drawNumbers(plot, this.numbers(), SAMPLE_S, this.colours(), (tick) =>
-          shown('tension', this.run().trace.at(tick, 'tensionN')),
-        );
-      },
-    };
-    const marksOnly = (plot: uPlot): void =>
-      drawMarks(plot, this.marks(), SAMPLE_S, this.colours(), false);
-    return [
-      tension,
-      {
-        lines: [{colour: 'output', width: 1.75}],
-        range: () => [0, 100],
-        showsTime: false,
-        topPx: 10,
-        drawAbove: marksOnly,
-      },
-      {
-        lines: [
-          {colour: 'ink', width: 1.75},
-          {colour: 'muted', width: 1.25, dash: [3, 3], scale: 'right'},
-        ],
-        range: () => [0, shown('speed', this.topSpeedMps)],
-        rightRange: () => [0, shown('diameter', 2.2 * this.largestRadiusM())],
-        showsTime: true,
-        topPx: 10,
-        drawAbove: marksOnly,
-      },
-    ];
-  }
-
   private drawLive(): void {
-    this.isOddFrame = !this.isOddFrame; // 30 drawings a second are enough for the eye
-    if (this.isOddFrame || this.heldEndS() !== null) return;
+    const nowMs = performance.now();
+    if (nowMs - this.lastDrawnMs < DRAW_EVERY_MS || this.heldEndS() !== null) return;
     this.draw();
   }
 
   private draw(): void {
-    if (this.plots.length < 3) return;
-    const {trace} = this.run();
-    const nowS = trace.count * SAMPLE_S;
-    const windowS = this.windowS();
-    const endS = this.heldEndS() ?? Math.max(windowS, nowS);
-    const first = Math.floor((endS - windowS) / SAMPLE_S);
-    const last = Math.ceil(endS / SAMPLE_S);
-    const get = (name: TraceColumn, quantity: Quantity, times = 1): number[] =>
-      trace
-        .points(name, first, last, MOST_POINTS)
-        .values.map((value) => toPerson(quantity, value * times, this.units()));
-
-    const rows = trace.points('tensionN', first, last, MOST_POINTS).rows;
-    const seconds = rows.map((row) => row * SAMPLE_S);
-    this.measureRanges(first, last);
-    const tensions = [get('setPointN', 'tension'), get('measuredN', 'tension')];
-    if (this.showsTruth()) tensions.push(get('tensionN', 'tension'));
-    const data: uPlot.AlignedData[] = [
-      [seconds, ...tensions],
-      [seconds, get('outputPct', 'percent')],
-      [seconds, get('lineMps', 'speed'), get('radiusM', 'diameter', 2)],
-    ];
-    this.plots.forEach((plot, place) => {
-      plot.batch(() => {
-        plot.setData(data[place]!, false);
-        plot.setScale('x', {min: endS - windowS, max: endS});
-      });
-    });
-  }
-
-  /** Ranges only ever step up while a run goes on: a scale that breathes cannot be read. */
-  private measureRanges(first: number, last: number): void {
-    const {trace} = this.run();
-    const highest = (name: TraceColumn): number =>
-      Math.max(0, ...trace.points(name, first, last, 400).values);
-    const speed = Math.max(highest('lineMps'), this.run().view?.lineTargetMps ?? 0);
-    this.topSpeedMps = Math.max(1, Math.ceil(speed * 1.1));
-    this.observedTopN = 1.15 * Math.max(1, highest('tensionN'), highest('setPointN'));
+    if (this.plots === null) return;
+    this.lastDrawnMs = performance.now();
+    this.plots.draw(this.sceneNow());
   }
 
   private fit(): void {
-    const width = this.host.nativeElement.clientWidth;
-    const heights = width < 600 ? NARROW_HEIGHTS_PX : HEIGHTS_PX;
-    this.plots.forEach((plot, place) => plot.setSize({width, height: heights[place]!}));
+    const {clientWidth, clientHeight} = this.area().nativeElement;
+    if (clientWidth === 0) return;
+    this.namesTraces = clientWidth >= NAMES_FROM_PX;
+    this.plots?.setSize(clientWidth, clientHeight);
     this.draw();
   }
 
   private dropPlots(): void {
-    for (const plot of this.plots) plot.destroy();
-    this.plots = [];
+    this.plots?.destroy();
+    this.plots = null;
   }
 }

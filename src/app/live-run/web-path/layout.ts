@@ -1,6 +1,16 @@
 import {type Wheel} from './geometry';
 
-/** Where things stand on the sheet [px of the view box]. */
+export type LabelPlace = 'brake' | 'diameter' | 'tension' | 'truth' | 'speed';
+
+/** Where a value is written, and from where a fine line leads to what it belongs to [px]. */
+export interface LabelSpot {
+  readonly x: number;
+  readonly y: number;
+  readonly anchor: 'start' | 'middle' | 'end';
+  readonly leader: string;
+}
+
+/** Where things stand on the sheet. One unit is one pixel, so that lines and words keep their size. */
 export interface Layout {
   readonly width: number;
   readonly height: number;
@@ -12,52 +22,83 @@ export interface Layout {
   readonly idlerOut: Wheel;
   /** Lower nip roller; the web lies on its top. */
   readonly nip: Wheel;
+  /** Where the web leaves the sheet. */
   readonly end: number;
   readonly floor: number;
-  readonly labels: Readonly<
-    Record<
-      'brake' | 'diameter' | 'tension' | 'truth' | 'speed',
-      {x: number; y: number; anchor: 'start' | 'middle' | 'end'}
-    >
-  >;
+  readonly labels: Readonly<Record<LabelPlace, LabelSpot>>;
 }
 
-export const WIDE: Layout = {
-  width: 1200,
-  height: 262,
-  roll: {x: 330, y: 128},
-  fullRollR: 104,
-  idlerIn: {x: 560, y: 60, r: 15, side: 'over'},
-  cell: {x: 672, y: 182, r: 20, side: 'under'},
-  idlerOut: {x: 784, y: 60, r: 15, side: 'over'},
-  nip: {x: 990, y: 96, r: 26, side: 'over'},
-  end: 1110,
-  floor: 246,
-  labels: {
-    brake: {x: 196, y: 128, anchor: 'end'},
-    diameter: {x: 452, y: 206, anchor: 'start'},
-    tension: {x: 716, y: 196, anchor: 'start'},
-    truth: {x: 850, y: 196, anchor: 'start'},
-    speed: {x: 1040, y: 148, anchor: 'start'},
-  },
-};
+/** Below this width values stand under the drawing. */
+const NARROW_BELOW_PX = 620;
+const LEAST_WIDTH_PX = 280;
 
-export const NARROW: Layout = {
-  width: 480,
-  height: 330,
-  roll: {x: 112, y: 128},
-  fullRollR: 92,
-  idlerIn: {x: 236, y: 62, r: 12, side: 'over'},
-  cell: {x: 292, y: 158, r: 15, side: 'under'},
-  idlerOut: {x: 348, y: 62, r: 12, side: 'over'},
-  nip: {x: 424, y: 84, r: 20, side: 'over'},
-  end: 476,
-  floor: 230,
-  labels: {
-    brake: {x: 10, y: 272, anchor: 'start'},
-    diameter: {x: 132, y: 272, anchor: 'start'},
-    tension: {x: 244, y: 272, anchor: 'start'},
-    truth: {x: 244, y: 326, anchor: 'start'},
-    speed: {x: 372, y: 272, anchor: 'start'},
-  },
-};
+/** Lays the stand out over the width there is. */
+export function layoutFor(width: number): Layout {
+  return width < NARROW_BELOW_PX ? narrow(Math.max(LEAST_WIDTH_PX, width)) : wide(width);
+}
+
+function wide(width: number): Layout {
+  // Wider sheets give longer spans, not larger rolls, until both look lost.
+  const at = (share: number): number => Math.round(share * width);
+  const roll = {x: Math.max(206, at(0.225)), y: 110};
+  const idlerIn = {x: at(0.49), y: 58, r: 13, side: 'over'} as const;
+  const cell = {x: at(0.592), y: 154, r: 19, side: 'under'} as const;
+  const idlerOut = {x: at(0.71), y: 58, r: 13, side: 'over'} as const;
+  const nip = {x: at(0.87), y: 100, r: 24, side: 'over'} as const;
+  const fullRollR = 92;
+  return {
+    width,
+    height: 230,
+    roll,
+    fullRollR,
+    idlerIn,
+    cell,
+    idlerOut,
+    nip,
+    end: width - 6,
+    floor: 212,
+    labels: {
+      brake: {
+        x: roll.x - fullRollR - 22,
+        y: 160,
+        anchor: 'end',
+        leader: `M${roll.x - fullRollR - 18} 154L${roll.x - 22} ${roll.y + 10}`,
+      },
+      diameter: {x: roll.x + fullRollR + 14, y: 178, anchor: 'start', leader: ''},
+      tension: {x: cell.x + 30, y: 172, anchor: 'start', leader: ''},
+      truth: {x: idlerOut.x + 36, y: 118, anchor: 'start', leader: `M${idlerOut.x + 64} 94v-18`},
+      speed: {x: nip.x - 20, y: 172, anchor: 'end', leader: ''},
+    },
+  };
+}
+
+function narrow(width: number): Layout {
+  const at = (share: number): number => Math.round(share * width);
+  const fullRollR = Math.round(Math.min(84, 0.2 * width));
+  const column = (place: number): number => Math.round(4 + (place * (width - 8)) / 3);
+  const label = (place: number, y: number): LabelSpot => ({
+    x: column(place),
+    y,
+    anchor: 'start',
+    leader: '',
+  });
+  return {
+    width,
+    height: 268,
+    roll: {x: fullRollR + 12, y: 100},
+    fullRollR,
+    idlerIn: {x: at(0.53), y: 46, r: 9, side: 'over'},
+    cell: {x: at(0.645), y: 124, r: 12, side: 'under'},
+    idlerOut: {x: at(0.76), y: 46, r: 9, side: 'over'},
+    nip: {x: at(0.905), y: 74, r: 15, side: 'over'},
+    end: width - 2,
+    floor: 188,
+    labels: {
+      tension: label(0, 218),
+      brake: label(1, 218),
+      speed: label(2, 218),
+      diameter: label(0, 258),
+      truth: label(1, 258),
+    },
+  };
+}

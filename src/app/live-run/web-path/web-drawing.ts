@@ -1,5 +1,13 @@
 import {type RunView} from '#sim-core/index';
-import {controlOf, dropFor, type Point, type Stretch, tangent, type Wheel} from './geometry';
+import {
+  controlOf,
+  dropFor,
+  lengthOf,
+  type Point,
+  type Stretch,
+  tangent,
+  type Wheel,
+} from './geometry';
 import {type Layout} from './layout';
 
 /** What of a stand the drawing needs. Lengths [m]. */
@@ -18,54 +26,108 @@ export interface Drawn {
   /** Path of the web; two pieces when it is broken. */
   readonly web: string;
   readonly webWidth: number;
-  /** Part of a turn covered by the brake's arc, 0 … 1. */
+  /** Drawn radius of the brake disc. */
+  readonly brakeR: number;
+  /** Part of the arc covered by the brake's output, 0 … 1. */
   readonly brakeShare: number;
 }
 
-/** Draws a view: roll to scale, web straight, sagging by its slack, or parted. */
-export function draw(layout: Layout, shape: StandShape, view: RunView, isBroken: boolean): Drawn {
+/** Share of the set point below which the web is drawn sagging by its own weight. */
+const LOOSE_BELOW = 0.3;
+const OWN_SAG_PX = 7;
+
+/**
+ * Draws a view: roll to scale, web straight, sagging by its slack, or parted. `fallen` is how far the ends of a
+ * broken web have come down, 0 … 1.
+ */
+export function draw(
+  layout: Layout,
+  shape: StandShape,
+  view: RunView,
+  isBroken: boolean,
+  fallen = 1,
+): Drawn {
   const scale = layout.fullRollR / shape.fullRadiusM;
   const rollR = view.radiusM * scale;
+  const coreR = shape.coreRadiusM * scale;
   const roll: Wheel = {...layout.roll, r: rollR, side: 'over'};
-  const stretches = [
+  const stretches: Stretches = [
     tangent(roll, layout.idlerIn),
     tangent(layout.idlerIn, layout.cell),
     tangent(layout.cell, layout.idlerOut),
     tangent(layout.idlerOut, layout.nip),
   ];
+  const pull = view.tensionN / Math.max(1, view.setPointN);
   return {
     rollR,
     rollDeg: (view.rollRad * 180) / Math.PI,
-    coreR: shape.coreRadiusM * scale,
-    web: isBroken ? parted(layout, stretches) : whole(layout, stretches, view.slackM * scale),
-    webWidth: 1.6 + 1.6 * Math.min(1, view.tensionN / Math.max(1, view.setPointN)),
+    coreR,
+    web: isBroken
+      ? parted(layout, stretches, fallen)
+      : whole(layout, stretches, view.slackM * scale, pull),
+    webWidth: 1.8 + 1.2 * Math.min(1, pull),
+    brakeR: Math.max(coreR + 5, Math.min(0.27 * layout.fullRollR, 0.6 * rollR)),
     brakeShare: Math.max(0, Math.min(1, view.outputPct / 100)),
   };
 }
 
-function whole(layout: Layout, stretches: readonly Stretch[], slackPx: number): string {
-  const [first, ...others] = stretches as [Stretch, ...Stretch[]];
+type Stretches = readonly [Stretch, Stretch, Stretch, Stretch];
+
+function whole(layout: Layout, stretches: Stretches, slackPx: number, pull: number): string {
+  const [first, ...others] = stretches;
   const wheels = [layout.idlerIn, layout.cell, layout.idlerOut];
-  let path = `M${at(first.from)}`;
   // The loop hangs where it forms: between roll and first idler. Its curve is longer than the line by the slack.
-  const drop = dropFor(first, slackPx);
-  path += drop > 0 ? ` Q${at(controlOf(first, drop))} ${at(first.to)}` : ` L${at(first.to)}`;
+  const ownSag = 2 * OWN_SAG_PX * Math.max(0, 1 - pull / LOOSE_BELOW);
+  const drop = Math.max(dropFor(first, slackPx), ownSag);
+  let path = `M${at(first.from)} Q${at(controlOf(first, drop))} ${at(first.to)}`;
   others.forEach((stretch, place) => {
     path += `${around(wheels[place]!, stretch.from)} L${at(stretch.to)}`;
   });
   return `${path} H${layout.end}`;
 }
 
-/** After a break both ends hang from the last roller that holds them. */
-function parted(layout: Layout, stretches: readonly Stretch[]): string {
-  const [first, , , last] = stretches as [Stretch, Stretch, Stretch, Stretch];
-  const end = first.from;
-  const hang = layout.floor - 6;
-  const torn = `M${at(end)} Q${end.x + 46} ${end.y + 10} ${end.x + 52} ${hang} l10 3`;
-  const rest = `M${last.to.x - 96} ${hang} Q${last.to.x - 70} ${last.to.y + 30} ${at(last.to)} H${layout.end}`;
-  return `${torn} ${rest}`;
+/** After a break, which is drawn before the load cell, both ends fall from the idlers that hold them. */
+function parted(layout: Layout, [first, inner, outer, last]: Stretches, fallen: number): string {
+  const {idlerIn, idlerOut, floor} = layout;
+  const left = hang(
+    inner.from,
+    tornAt(inner, 0.45),
+    {x: idlerIn.x + idlerIn.r + 3, y: floor - 26},
+    fallen,
+  );
+  const right = hang(
+    outer.to,
+    tornAt(outer, 0.4),
+    {x: idlerOut.x - idlerOut.r - 4, y: floor - 10},
+    fallen,
+  );
+  return (
+    `M${at(first.from)} L${at(first.to)}${around(idlerIn, inner.from)}${left}` +
+    ` M${at(outer.to)}${right} M${at(outer.to)}${around(idlerOut, last.from)} L${at(last.to)} H${layout.end}`
+  );
 }
 
+/** A torn end on its way from where it tore to where it hangs, with a curl at its tip. */
+function hang(from: Point, torn: Point, down: Point, fallen: number): string {
+  const end = between(torn, down, fallen);
+  const side = Math.sign(torn.x - from.x);
+  const bulge = {x: between(from, end, 0.5).x + side * 12 * fallen, y: between(from, end, 0.55).y};
+  const curl = 9 * fallen;
+  return (
+    ` Q${at(bulge)} ${at(end)}` +
+    ` q${(side * curl).toFixed(2)} ${curl.toFixed(2)} ${(side * 1.4 * curl).toFixed(2)} ${(-0.5 * curl).toFixed(2)}`
+  );
+}
+
+function tornAt({from, to}: Stretch, share: number): Point {
+  return between(from, to, share);
+}
+
+function between(from: Point, to: Point, share: number): Point {
+  return {x: from.x + (to.x - from.x) * share, y: from.y + (to.y - from.y) * share};
+}
+
+/** Along a wheel to where the next stretch leaves it; nothing when the web only touches. */
 function around(wheel: Wheel, to: Point): string {
   const sweep = wheel.side === 'over' ? 1 : 0;
   return ` A${wheel.r} ${wheel.r} 0 0 ${sweep} ${at(to)}`;
@@ -73,4 +135,9 @@ function around(wheel: Wheel, to: Point): string {
 
 function at(point: Point): string {
   return `${point.x.toFixed(2)} ${point.y.toFixed(2)}`;
+}
+
+/** Length of web that the first stretch would have if it were straight [px]; specs compare with it. */
+export function straightLength(layout: Layout, rollR: number): number {
+  return lengthOf(tangent({...layout.roll, r: rollR, side: 'over'}, layout.idlerIn));
 }
