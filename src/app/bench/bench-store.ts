@@ -76,8 +76,7 @@ export class BenchStore {
 
   /** The set-up as it was delivered; the run so far can be had back. */
   startAfresh(): Promise<void> {
-    this.size.set('half');
-    return this.begin(this.setUp().scenario);
+    return this.begin(this.setUp().scenario, 'half');
   }
 
   /** The same roll and seed from the beginning, with the settings as they are now. */
@@ -95,8 +94,7 @@ export class BenchStore {
   }
 
   chooseRoll(size: RollSize): Promise<void> {
-    this.size.set(size);
-    return this.begin(withRadius(this.withSettingsNow(), this.setUp().radii[size]));
+    return this.begin(withRadius(this.withSettingsNow(), this.setUp().radii[size]), size);
   }
 
   /** Takes the run before this one up again, where it was left. */
@@ -112,10 +110,11 @@ export class BenchStore {
     if (this.isReady()) void this.keep(this.run.entries());
   }
 
-  private async begin(document: Scenario): Promise<void> {
+  private async begin(document: Scenario, size = this.size()): Promise<void> {
     const entries = this.run.entries();
     if (this.isReady() && entries.length > 0) this.before.set(this.runSoFar(entries));
     this.startedWith.set(document);
+    this.size.set(size);
     this.isTakenUp.set(false);
     if (await this.run.start({document})) await this.keep([]);
   }

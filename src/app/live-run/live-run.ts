@@ -2,6 +2,7 @@ import {signal} from '@angular/core';
 import {
   type Act,
   type Fault,
+  type LiveSettings,
   type LogEntry,
   type Note,
   type Outcome,
@@ -232,11 +233,24 @@ export class LiveRun {
     if (this.frames.now() - this.lastReadOutMs >= READ_OUT_MS) this.publishReadOuts();
   }
 
+  /** What was set and takes effect in the next tick: while time stands it is in force for people already. */
+  private pendingSettings(tick: number): LiveSettings {
+    let pending: LiveSettings = {};
+    const entries = this.state.entries();
+    for (let place = entries.length - 1; place >= 0; place--) {
+      const entry = entries[place]!;
+      if (entry.tick < tick) break;
+      if (entry.kind === 'set') pending = {...entry.set, ...pending};
+    }
+    return pending;
+  }
+
   private publishReadOuts(): void {
     this.lastReadOutMs = this.frames.now();
     if (this.newest === null) return;
-    const {view, settings} = this.newest;
+    const {view} = this.newest;
     this.state.readOuts.set(view);
+    const settings = {...this.newest.settings, ...this.pendingSettings(view.tick)};
     if (!isSame(settings, this.state.settings())) this.state.settings.set(settings);
   }
 }

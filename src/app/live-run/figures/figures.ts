@@ -14,8 +14,9 @@ import {figuresOf, lastAct, type Yardstick} from './figures-of';
         <div [class.out]="figure.isOut">
           <dt>{{ figure.name }}</dt>
           <dd>
-            <span class="number">{{ figure.number }}</span>
-            <span class="muted">{{ figure.unit }}</span>
+            <span class="number">{{ figure.number }}</span>&ngsp;<span class="muted">{{
+              figure.unit
+            }}</span>
           </dd>
         </div>
       }
@@ -48,7 +49,6 @@ import {figuresOf, lastAct, type Yardstick} from './figures-of';
       font-weight: 600;
     }
     .muted {
-      margin-left: 0.3em;
       font-size: 0.9rem;
     }
     .out .number {

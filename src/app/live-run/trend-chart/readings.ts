@@ -21,7 +21,7 @@ interface Source {
   readonly isDashed?: boolean;
 }
 
-const TRUTH: Source = {name: 'tensionN', label: 'true tension', quantity: 'tension', tone: 'ink'};
+const TRUTH: Source = {name: 'tensionN', label: 'true', quantity: 'tension', tone: 'ink'};
 const SOURCES: readonly Source[] = [
   {name: 'measuredN', label: 'measured', quantity: 'tension', tone: 'measured'},
   {name: 'setPointN', label: 'set point', quantity: 'tension', tone: 'pine', isDashed: true},

@@ -19,7 +19,7 @@ import {SAMPLE_S, type TrendScene} from './trend-scene';
 const MOST_POINTS = 4100;
 /** Room for the traces' names [px]. */
 const NAMES_PX = 104;
-const BARE_PX = 10;
+const BARE_PX = 20;
 /** How the height is shared between tension, output and speed. */
 const SHARES = [0.5, 0.22, 0.28] as const;
 
@@ -54,7 +54,7 @@ const MEASURED: Line = {
 };
 const TRUTH: Line = {
   name: 'tensionN',
-  label: 'true tension',
+  label: 'true',
   quantity: 'tension',
   times: 1,
   colour: 'ink',

@@ -36,43 +36,69 @@ export function lengthOf({from, to}: Stretch): number {
   return Math.hypot(to.x - from.x, to.y - from.y);
 }
 
-/** Length of a quadratic curve whose control point lies `drop` below the middle of a chord [px]. */
-export function curveLength({from, to}: Stretch, drop: number): number {
+/** Where a line of this direction touches a wheel whose top the web passes over. */
+export function touchOver(wheel: Point & {readonly r: number}, directionRad: number): Point {
+  return {
+    x: wheel.x + wheel.r * Math.sin(directionRad),
+    y: wheel.y - wheel.r * Math.cos(directionRad),
+  };
+}
+
+/** Web that hangs between two wheels: where it leaves the first, hangs towards, and meets the second. */
+export interface Hanging {
+  readonly from: Point;
+  readonly control: Point;
+  readonly to: Point;
+  /** Length along the wheels and the curve beyond the straight stretch [px]. */
+  readonly excess: number;
+}
+
+/** The web between two wheels when it is `excess` longer than the straight stretch between them [px]. */
+export function hang(a: Wheel, b: Wheel, excess: number): Hanging {
+  const chord = tangent(a, b);
+  let low = 0;
+  let high = lengthOf(chord) + 2 * excess;
+  for (let step = 0; step < 40; step++) {
+    const middle = (low + high) / 2;
+    if (hangBy(a, b, chord, middle).excess < excess) low = middle;
+    else high = middle;
+  }
+  return hangBy(a, b, chord, (low + high) / 2);
+}
+
+/** The web whose curve is drawn towards a point `drop` below the middle of the straight stretch. */
+export function hangBy(a: Wheel, b: Wheel, chord: Stretch, drop: number): Hanging {
+  const control = {x: (chord.from.x + chord.to.x) / 2, y: (chord.from.y + chord.to.y) / 2 + drop};
+  const straight = Math.atan2(chord.to.y - chord.from.y, chord.to.x - chord.from.x);
+  let leaves = straight;
+  let meets = straight;
+  for (let round = 0; round < 6; round++) {
+    const from = touchOver(a, leaves);
+    const to = touchOver(b, meets);
+    leaves = Math.atan2(control.y - from.y, control.x - from.x);
+    meets = Math.atan2(to.y - control.y, to.x - control.x);
+  }
+  const from = touchOver(a, leaves);
+  const to = touchOver(b, meets);
+  // Web still on the roll lies farther round it; on the second wheel it lies on sooner.
+  const onWheels = a.r * (leaves - straight) + b.r * (straight - meets);
+  return {from, control, to, excess: onWheels + curveLength(from, control, to) - lengthOf(chord)};
+}
+
+/** Length of a quadratic curve [px]. */
+export function curveLength(from: Point, control: Point, to: Point): number {
   const steps = 32;
   let length = 0;
-  let last: Point = from;
+  let last = from;
   for (let step = 1; step <= steps; step++) {
-    const point = pointOn(from, to, drop, step / steps);
+    const t = step / steps;
+    const u = 1 - t;
+    const point = {
+      x: u * u * from.x + 2 * u * t * control.x + t * t * to.x,
+      y: u * u * from.y + 2 * u * t * control.y + t * t * to.y,
+    };
     length += Math.hypot(point.x - last.x, point.y - last.y);
     last = point;
   }
   return length;
-}
-
-/** How far below the chord the control point must lie for the curve to be `excess` longer than it [px]. */
-export function dropFor(chord: Stretch, excess: number): number {
-  if (excess <= 0) return 0;
-  const straight = lengthOf(chord);
-  let low = 0;
-  let high = 2 * (straight + excess);
-  for (let step = 0; step < 40; step++) {
-    const middle = (low + high) / 2;
-    if (curveLength(chord, middle) - straight < excess) low = middle;
-    else high = middle;
-  }
-  return (low + high) / 2;
-}
-
-/** The control point's place for a given drop. */
-export function controlOf({from, to}: Stretch, drop: number): Point {
-  return {x: (from.x + to.x) / 2, y: (from.y + to.y) / 2 + drop};
-}
-
-function pointOn(from: Point, to: Point, drop: number, t: number): Point {
-  const control = controlOf({from, to}, drop);
-  const u = 1 - t;
-  return {
-    x: u * u * from.x + 2 * u * t * control.x + t * t * to.x,
-    y: u * u * from.y + 2 * u * t * control.y + t * t * to.y,
-  };
 }

@@ -13,6 +13,8 @@ export interface LabelSpot {
 /** Where things stand on the sheet. One unit is one pixel, so that lines and words keep their size. */
 export interface Layout {
   readonly width: number;
+  /** Whether values stand under the drawing. */
+  readonly isNarrow: boolean;
   readonly height: number;
   readonly roll: {readonly x: number; readonly y: number};
   /** Drawn radius of the largest roll of the stand. */
@@ -29,7 +31,7 @@ export interface Layout {
 }
 
 /** Below this width values stand under the drawing. */
-const NARROW_BELOW_PX = 620;
+const NARROW_BELOW_PX = 700;
 const LEAST_WIDTH_PX = 280;
 
 /** Lays the stand out over the width there is. */
@@ -48,6 +50,7 @@ function wide(width: number): Layout {
   const fullRollR = 92;
   return {
     width,
+    isNarrow: false,
     height: 230,
     roll,
     fullRollR,
@@ -67,7 +70,7 @@ function wide(width: number): Layout {
       diameter: {x: roll.x + fullRollR + 14, y: 178, anchor: 'start', leader: ''},
       tension: {x: cell.x + 30, y: 172, anchor: 'start', leader: ''},
       truth: {x: idlerOut.x + 36, y: 118, anchor: 'start', leader: `M${idlerOut.x + 64} 94v-18`},
-      speed: {x: nip.x - 20, y: 172, anchor: 'end', leader: ''},
+      speed: {x: width - 6, y: 172, anchor: 'end', leader: ''},
     },
   };
 }
@@ -75,7 +78,7 @@ function wide(width: number): Layout {
 function narrow(width: number): Layout {
   const at = (share: number): number => Math.round(share * width);
   const fullRollR = Math.round(Math.min(84, 0.2 * width));
-  const column = (place: number): number => Math.round(4 + (place * (width - 8)) / 3);
+  const column = (place: number): number => Math.round(4 + [0, 0.4, 0.7][place]! * (width - 8));
   const label = (place: number, y: number): LabelSpot => ({
     x: column(place),
     y,
@@ -84,7 +87,8 @@ function narrow(width: number): Layout {
   });
   return {
     width,
-    height: 268,
+    isNarrow: true,
+    height: 284,
     roll: {x: fullRollR + 12, y: 100},
     fullRollR,
     idlerIn: {x: at(0.53), y: 46, r: 9, side: 'over'},

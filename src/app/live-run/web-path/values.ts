@@ -38,6 +38,6 @@ export function valuesOf(view: RunView, {units, showsTruth, band}: Showing): Sho
     make('diameter', 'diameter', 2 * view.radiusM, 'roll diameter'),
     make('tension', 'tension', view.measuredN, 'measured tension', measuredTone),
     make('speed', 'speed', view.lineMps, 'line speed'),
-    ...(showsTruth ? [make('truth', 'tension', view.tensionN, 'true web tension', truthTone)] : []),
+    ...(showsTruth ? [make('truth', 'tension', view.tensionN, 'true tension', truthTone)] : []),
   ];
 }

@@ -1,8 +1,8 @@
 import {type RunView} from '#sim-core/index';
 import {
-  controlOf,
-  dropFor,
-  lengthOf,
+  hang,
+  hangBy,
+  type Hanging,
   type Point,
   type Stretch,
   tangent,
@@ -35,6 +35,8 @@ export interface Drawn {
 /** Share of the set point below which the web is drawn sagging by its own weight. */
 const LOOSE_BELOW = 0.3;
 const OWN_SAG_PX = 7;
+/** Slack from which it is drawn as a loop of its true length; below, the own sag shows that the web is loose. */
+const LOOP_FROM_PX = 1;
 
 /**
  * Draws a view: roll to scale, web straight, sagging by its slack, or parted. `fallen` is how far the ends of a
@@ -64,7 +66,7 @@ export function draw(
     coreR,
     web: isBroken
       ? parted(layout, stretches, fallen)
-      : whole(layout, stretches, view.slackM * scale, pull),
+      : whole(layout, roll, stretches, view.slackM * scale, pull),
     webWidth: 1.8 + 1.2 * Math.min(1, pull),
     brakeR: Math.max(coreR + 5, Math.min(0.27 * layout.fullRollR, 0.6 * rollR)),
     brakeShare: Math.max(0, Math.min(1, view.outputPct / 100)),
@@ -73,31 +75,46 @@ export function draw(
 
 type Stretches = readonly [Stretch, Stretch, Stretch, Stretch];
 
-function whole(layout: Layout, stretches: Stretches, slackPx: number, pull: number): string {
+function whole(
+  layout: Layout,
+  roll: Wheel,
+  stretches: Stretches,
+  slackPx: number,
+  pull: number,
+): string {
   const [first, ...others] = stretches;
   const wheels = [layout.idlerIn, layout.cell, layout.idlerOut];
-  // The loop hangs where it forms: between roll and first idler. Its curve is longer than the line by the slack.
   const ownSag = 2 * OWN_SAG_PX * Math.max(0, 1 - pull / LOOSE_BELOW);
-  const drop = Math.max(dropFor(first, slackPx), ownSag);
-  let path = `M${at(first.from)} Q${at(controlOf(first, drop))} ${at(first.to)}`;
+  // The loop hangs where it forms: between roll and first idler, and is longer than the straight by the slack.
+  const {from, control, to} =
+    slackPx > LOOP_FROM_PX
+      ? onFloor(hang(roll, layout.idlerIn, slackPx), layout.floor)
+      : hangBy(roll, layout.idlerIn, first, ownSag);
+  let path = `M${at(from)} Q${at(control)} ${at(to)}`;
   others.forEach((stretch, place) => {
     path += `${around(wheels[place]!, stretch.from)} L${at(stretch.to)}`;
   });
   return `${path} H${layout.end}`;
 }
 
+/** What of a long loop would hang below the floor lies on it. */
+function onFloor({from, control, to, excess}: Hanging, floor: number): Hanging {
+  const lowestControl = 2 * (floor - 2) - (from.y + to.y) / 2;
+  return {from, control: {x: control.x, y: Math.min(control.y, lowestControl)}, to, excess};
+}
+
 /** After a break, which is drawn before the load cell, both ends fall from the idlers that hold them. */
 function parted(layout: Layout, [first, inner, outer, last]: Stretches, fallen: number): string {
   const {idlerIn, idlerOut, floor} = layout;
-  const left = hang(
+  const left = tornEnd(
     inner.from,
-    tornAt(inner, 0.45),
+    between(inner.from, inner.to, 0.45),
     {x: idlerIn.x + idlerIn.r + 3, y: floor - 26},
     fallen,
   );
-  const right = hang(
+  const right = tornEnd(
     outer.to,
-    tornAt(outer, 0.4),
+    between(outer.from, outer.to, 0.4),
     {x: idlerOut.x - idlerOut.r - 4, y: floor - 10},
     fallen,
   );
@@ -108,7 +125,7 @@ function parted(layout: Layout, [first, inner, outer, last]: Stretches, fallen: 
 }
 
 /** A torn end on its way from where it tore to where it hangs, with a curl at its tip. */
-function hang(from: Point, torn: Point, down: Point, fallen: number): string {
+function tornEnd(from: Point, torn: Point, down: Point, fallen: number): string {
   const end = between(torn, down, fallen);
   const side = Math.sign(torn.x - from.x);
   const bulge = {x: between(from, end, 0.5).x + side * 12 * fallen, y: between(from, end, 0.55).y};
@@ -117,10 +134,6 @@ function hang(from: Point, torn: Point, down: Point, fallen: number): string {
     ` Q${at(bulge)} ${at(end)}` +
     ` q${(side * curl).toFixed(2)} ${curl.toFixed(2)} ${(side * 1.4 * curl).toFixed(2)} ${(-0.5 * curl).toFixed(2)}`
   );
-}
-
-function tornAt({from, to}: Stretch, share: number): Point {
-  return between(from, to, share);
 }
 
 function between(from: Point, to: Point, share: number): Point {
@@ -135,9 +148,4 @@ function around(wheel: Wheel, to: Point): string {
 
 function at(point: Point): string {
   return `${point.x.toFixed(2)} ${point.y.toFixed(2)}`;
-}
-
-/** Length of web that the first stretch would have if it were straight [px]; specs compare with it. */
-export function straightLength(layout: Layout, rollR: number): number {
-  return lengthOf(tangent({...layout.roll, r: rollR, side: 'over'}, layout.idlerIn));
 }

@@ -1,9 +1,9 @@
 import {
+  afterRenderEffect,
   ChangeDetectionStrategy,
   Component,
   computed,
   DestroyRef,
-  effect,
   ElementRef,
   inject,
   input,
@@ -30,7 +30,7 @@ const ARC_DEG = 240;
   templateUrl: './web-path.html',
   styleUrl: './web-path.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
-  host: {'[class.narrow]': 'layout().width < 620'},
+  host: {'[class.narrow]': 'layout().isNarrow'},
 })
 export class WebPath {
   readonly run = input.required<LiveRun>();
@@ -89,7 +89,8 @@ export class WebPath {
     observer.observe(this.host.nativeElement);
     inject(DestroyRef).onDestroy(() => observer.disconnect());
 
-    effect((onCleanup) => {
+    // After the render: it sizes laps that the template has just laid out.
+    afterRenderEffect((onCleanup) => {
       this.standing(); // draws anew when the layout or the stand changes
       this.last = null;
       const stop = this.run().onFrame((view) => this.show(view));
