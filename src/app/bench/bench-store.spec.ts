@@ -133,16 +133,16 @@ describe('BenchStore', () => {
 
 describe('withRadius', () => {
   for (const radiusM of [0.1, 0.25, 0.5]) {
-    it(`sets a holding brake that holds the tension at rest, radius ${radiusM} m`, () => {
-      const {brake, controller, initialTensionN} = withRadius(COATER_1.scenario, radiusM);
+    it(`sets a holding brake that can hold the job's tension, no stronger than a step, radius ${radiusM} m`, () => {
+      const {brake, controller} = withRadius(COATER_1.scenario, radiusM);
 
       // holding torque = residual + share of the rest; web torque = tension × radius
-      const residual = brake.residualTorqueNm ?? 0;
-      const share = controller.standstillPct / 100;
-      const holdsNm = residual + share * (brake.maxTorqueNm - residual);
-      expect(Math.abs(holdsNm - initialTensionN * radiusM)).toBeLessThan(
-        0.005 * brake.maxTorqueNm + 1e-9,
-      );
+      const residualNm = brake.residualTorqueNm ?? 0;
+      const stepNm = (brake.maxTorqueNm - residualNm) / 100;
+      const holdsNm = residualNm + stepNm * controller.standstillPct;
+      const neededNm = controller.setPointN * radiusM;
+      expect(holdsNm).toBeGreaterThanOrEqual(neededNm);
+      expect(holdsNm - neededNm).toBeLessThan(stepNm);
     });
   }
 });

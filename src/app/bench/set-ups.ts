@@ -14,7 +14,7 @@ export type RollSize = keyof SetUp['radii'];
 
 /**
  * An invented paper coater with a half roll. Data: common practice, no source. It starts at its own equilibrium:
- * the holding brake holds the initial tension at rest (150 N × 0.25 m = 37.5 N·m, which 15 % of the brake gives).
+ * the holding brake can hold the job's tension at rest (200 N × 0.25 m = 50 N·m, which 20 % of the brake gives).
  * The half roll hunts from a gain of about 2, the small one from about 0.8: half of the edge found on the one is
  * past the edge of the other.
  */
@@ -62,7 +62,7 @@ export const COATER_1: SetUp = {
       setPointN: 200,
       startRampS: 4,
       startFraction: 0.7,
-      standstillPct: 15,
+      standstillPct: 20,
       stopHoldS: 6,
       stopHoldGain: 1,
       radiusRefM: 0.25,
@@ -72,12 +72,12 @@ export const COATER_1: SetUp = {
   },
 };
 
-/** The stand with a roll of another radius, its holding brake set so that it holds the same tension at rest. */
+/** The stand with a roll of another radius, its holding brake set so that it can hold the job's tension at rest. */
 export function withRadius(scenario: Scenario, radiusM: number): Scenario {
-  const {brake, controller, initialTensionN} = scenario;
+  const {brake, controller} = scenario;
   const residualNm = brake.residualTorqueNm ?? 0;
-  const share = (initialTensionN * radiusM - residualNm) / (brake.maxTorqueNm - residualNm);
-  const standstillPct = Math.round(Math.min(100, Math.max(0, 100 * share)));
+  const share = (controller.setPointN * radiusM - residualNm) / (brake.maxTorqueNm - residualNm);
+  const standstillPct = Math.min(100, Math.max(0, Math.ceil(100 * share)));
   return {
     ...scenario,
     roll: {...scenario.roll, radiusM},
