@@ -11,9 +11,9 @@ import {
 } from '../../platform/person-database';
 import {Session} from '../../session/session';
 import {ExerciseApi} from '../exercise-api';
-import {AttemptKeeper} from './attempt-keeper';
-import {holdAttempt} from './attempt-lock';
-import {AttemptSender, type SenderState} from './attempt-sender';
+import {AttemptKeeper} from '../outbox/attempt-keeper';
+import {holdAttempt} from '../outbox/attempt-lock';
+import {AttemptSender, type SenderState} from '../outbox/attempt-sender';
 import {joinLogs, type TakenUp} from './take-up';
 
 const NOTE_TICK_MS = 1000;

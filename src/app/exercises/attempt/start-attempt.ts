@@ -2,7 +2,7 @@ import {inject, Injectable} from '@angular/core';
 import {openPersonDatabase} from '../../platform/person-database';
 import {Session} from '../../session/session';
 import {ExerciseApi} from '../exercise-api';
-import {AttemptKeeper} from './attempt-keeper';
+import {AttemptKeeper} from '../outbox/attempt-keeper';
 
 /** Starts attempts: the id is made here, so that a lost answer does no harm. */
 @Injectable({providedIn: 'root'})
