@@ -39,7 +39,7 @@ export type Window =
       };
       /** End: the next line command of any kind, or this many seconds, whichever is first. */
       readonly forS?: number;
-      /** A shorter window says nothing: counts as not done. A break may end it sooner. */
+      /** A shorter window says nothing: counts as not done. */
       readonly atLeastS?: number;
     };
 
@@ -66,7 +66,10 @@ export interface MustNotCriterion {
 
 export type Criterion = MeasureCriterion | MustNotCriterion;
 
-/** Why marks were given or lost; words are made in shared/wording. */
+/**
+ * Why marks were given or lost; words are made in shared/wording. `notDone`: the run has no such part.
+ * `brokeBefore`: the run ended before or inside it, so that nothing could be earned.
+ */
 export type ReasonCode =
   'full' | 'part' | 'none' | 'notDone' | 'brokeBefore' | 'kept' | 'overLimit';
 

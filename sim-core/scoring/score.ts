@@ -1,7 +1,7 @@
 import {shareInTolerance} from '../measures/band';
 import {least, peak} from '../measures/extremes';
 import {tensionAtRest} from '../measures/rest';
-import {type Measured, type Span} from '../measures/rows';
+import {type Measured, placeOf, type Span} from '../measures/rows';
 import {loopM} from '../measures/slack';
 import {type LogEntry} from '../run/log';
 import {replay} from '../run/replay';
@@ -12,6 +12,7 @@ import {
   type CriterionResult,
   type MeasureCriterion,
   type MeasureName,
+  type MustNotCriterion,
   type ReasonCode,
   type Score,
   type Scored,
@@ -76,25 +77,35 @@ function resultOf(
 ): CriterionResult {
   const span = spanOf(criterion.window, facts);
   const measured = span === null ? null : measure(criterion.measure, span, target, facts);
-  if (measured === null) {
+  if (span === null || measured === null) {
     const reason: ReasonCode = facts.endedEarly ? 'brokeBefore' : 'notDone';
     return {index, value: null, marks: 0, reason, place: null};
   }
+
   const {value, place} = measured;
-  if (criterion.kind === 'mustNot') {
-    const sign = MORE_IS_BETTER.includes(criterion.measure) ? -1 : 1;
-    const isOver = sign * value > sign * criterion.limit;
-    return {index, value, marks: 0, reason: isOver ? 'overLimit' : 'kept', place};
-  }
-  const marks = marksFor(criterion, value);
-  const reason = marks === criterion.weight ? 'full' : marks === 0 ? 'none' : 'part';
-  return {index, value, marks, reason, place};
+  const marks = criterion.kind === 'measure' ? marksFor(criterion, value) : 0;
+  const reason =
+    criterion.kind === 'measure' ? marksReason(criterion, marks) : limitReason(criterion, value);
+  // What was lost by then is lost; what was still to be earned was not earned.
+  const isOpen = span.isCut && reason !== 'none' && reason !== 'overLimit';
+  if (!isOpen) return {index, value, marks, reason, place};
+  const atEnd = placeOf(span.to - 1, span.to - 1, 'tension');
+  return {index, value: null, marks: 0, reason: 'brokeBefore', place: atEnd};
 }
 
-/** Straight line between `zero` (no marks) and `full` (all), flat outside; one decimal. */
+function marksReason({weight}: MeasureCriterion, marks: number): ReasonCode {
+  return marks === weight ? 'full' : marks === 0 ? 'none' : 'part';
+}
+
+function limitReason({measure: name, limit}: MustNotCriterion, value: number): ReasonCode {
+  const isOver = MORE_IS_BETTER.includes(name) ? value < limit : value > limit;
+  return isOver ? 'overLimit' : 'kept';
+}
+
+/** Straight line between `zero` (no marks) and `full` (all), flat outside; what lies between has one decimal. */
 export function marksFor({full, zero, weight}: MeasureCriterion, value: number): number {
   const share = (value - zero) / (full - zero);
-  return oneDecimal(weight * Math.min(1, Math.max(0, share)));
+  return share >= 1 ? weight : oneDecimal(weight * Math.max(0, share));
 }
 
 function measure(

@@ -1,6 +1,7 @@
 import {type Span, type TraceRows} from '../measures/rows';
 import {type LogEntry} from '../run/log';
 import {PHASES} from '../run/trace';
+import {tickOf} from '../scenario/read-scenario';
 import {type Scenario} from '../scenario/scenario';
 import {type CommandRef, type Window} from './criteria';
 
@@ -19,6 +20,12 @@ export interface RunFacts {
   readonly endedEarly: boolean;
 }
 
+/** The rows a criterion looks at. */
+export interface FoundSpan extends Span {
+  /** Whether the run ended early inside the window: what would have come after is not known. */
+  readonly isCut: boolean;
+}
+
 /** All line commands in order: the scenario's own programme first within a tick, then the log. */
 export function commandsOf(
   scenario: Scenario,
@@ -26,7 +33,7 @@ export function commandsOf(
   sampleS: number,
 ): GivenCommand[] {
   const programme = scenario.line.map(({atS, command}) => ({
-    tick: Math.floor(atS / sampleS + 0.999999),
+    tick: tickOf(atS, sampleS),
     command,
   }));
   const given = entries.flatMap((entry) =>
@@ -36,7 +43,7 @@ export function commandsOf(
 }
 
 /** The rows a criterion looks at; null when the run has no such part. */
-export function spanOf(window: Window, facts: RunFacts): Span | null {
+export function spanOf(window: Window, facts: RunFacts): FoundSpan | null {
   switch (window.kind) {
     case 'times':
       return within(facts, window.fromS / facts.sampleS, window.toS / facts.sampleS);
@@ -47,7 +54,7 @@ export function spanOf(window: Window, facts: RunFacts): Span | null {
   }
 }
 
-function commandSpan(window: Window & {kind: 'commands'}, facts: RunFacts): Span | null {
+function commandSpan(window: Window & {kind: 'commands'}, facts: RunFacts): FoundSpan | null {
   const {commands, sampleS} = facts;
   let place = placeOf(window.from, facts);
   if (place === null) return null;
@@ -68,8 +75,7 @@ function commandSpan(window: Window & {kind: 'commands'}, facts: RunFacts): Span
   const span = within(facts, from, Math.min(nextTick, end));
   const leastRows = (window.atLeastS ?? 0) / sampleS;
   const isTooShort = span !== null && span.to - span.from < leastRows - 0.5;
-  const wasCut = facts.endedEarly && span?.to === facts.rows.count;
-  return isTooShort && !wasCut ? null : span;
+  return isTooShort && !span.isCut ? null : span;
 }
 
 /** Place of the command that qualifies; `nth` counts from 0, or from the end when negative. */
@@ -80,7 +86,7 @@ function placeOf(ref: CommandRef, {commands, rows}: RunFacts): number | null {
   return qualified[ref.nth < 0 ? qualified.length + ref.nth : ref.nth] ?? null;
 }
 
-function phaseSpan({phase, nth}: Window & {kind: 'phase'}, facts: RunFacts): Span | null {
+function phaseSpan({phase, nth}: Window & {kind: 'phase'}, facts: RunFacts): FoundSpan | null {
   const wanted = PHASES.indexOf(phase);
   let seen = -1;
   let from: number | null = null;
@@ -90,14 +96,21 @@ function phaseSpan({phase, nth}: Window & {kind: 'phase'}, facts: RunFacts): Spa
       from = row;
       seen++;
     } else if (!isIn && from !== null) {
-      if (seen === nth) return {from, to: row};
+      if (seen === nth) {
+        return {from, to: row, isCut: facts.endedEarly && row === facts.rows.count};
+      }
       from = null;
     }
   }
   return null;
 }
 
-function within({rows}: RunFacts, from: number, to: number): Span | null {
-  const span = {from: Math.round(from), to: Math.min(rows.count, Math.round(to))};
+function within({rows, endedEarly}: RunFacts, from: number, to: number): FoundSpan | null {
+  const end = Math.round(to);
+  const span = {
+    from: Math.round(from),
+    to: Math.min(rows.count, end),
+    isCut: endedEarly && end > rows.count,
+  };
   return span.from < span.to ? span : null;
 }
