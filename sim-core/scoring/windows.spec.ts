@@ -17,7 +17,7 @@ const restart: CommandWindow = {
   atLeastS: 8,
 };
 
-/** Sixty seconds; a run takes 8 s to 2 m/s, a stop 4 s; the line stands until the next run: 0.25 m/s² up, 0.5 m/s² down. */
+/** Sixty seconds; each run takes 8 s to 2 m/s, each stop from there 4 s. */
 function facts(commands: readonly GivenCommand[], rest: Partial<RunFacts> = {}): RunFacts {
   const speedAt = (row: number): number => {
     const last = commands.findLast(({tick}) => tick < row);

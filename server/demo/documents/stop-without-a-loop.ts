@@ -51,17 +51,17 @@ const scenario: Scenario = {
 
 /** The last stop from job speed is the one that is marked. */
 const lastStop = {command: 'stop', nth: -1, fromSpeedMps: 1.95} as const;
-/** Stop ramp 3 s, rounding 1 s, 3 s more, and one to spare: what the stop itself does to the web. */
-const stopping = {kind: 'commands', from: lastStop, forS: 8, atLeastS: 8} as const;
+/** Stop ramp 3 s, rounding 1 s and 3 s more: what the stop itself does to the web. */
+const stopping = {kind: 'commands', from: lastStop, forS: 7, atLeastS: 7} as const;
 /** Until the next command: a loop may also form late, or stay. */
-const untilRestart = {kind: 'commands', from: lastStop, atLeastS: 8} as const;
-/** Start ramp 7 s, rounding 1 s, 3 s more, and one to spare. */
+const untilRestart = {kind: 'commands', from: lastStop, atLeastS: 7} as const;
+/** Start ramp 7 s, rounding 1 s and 3 s more; it must at least be run up. */
 const restarting = {
   kind: 'commands',
   from: lastStop,
   then: {command: 'run', withinS: [12, 20]},
-  forS: 12,
-  atLeastS: 6,
+  forS: 11,
+  atLeastS: 8,
 } as const;
 
 const criteria: Criterion[] = [
@@ -76,8 +76,19 @@ const criteria: Criterion[] = [
 /**
  * Exercise 10 of the library. Lesson: enough brake to keep the web taut, gone before the next start. Ramps are
  * 3 and 7 s plus 1 s of rounding: the line stops in 4 s and starts in 8. Run on the engine (boost × / boost time
- * → loop, least, peak, restart peak): 1.0/6 s 128 mm, 0 N, 200 N, 2367 N; 1.4/5 s none, 58, 264, 200;
- * 1.8/6 s none, 128, 341, 200; 1.4/18 s none, 58, 264, 291; 1.4/2.5 s 58 mm, 0, 238, 1638.
+ * → loop, least, peak, restart peak; restart 15 s after the stop):
+ *
+ *     1.0 / 6 s    128 mm    0 N   200 N   2367 N   as found; with other gains 2132 to 3985 N
+ *     1.3 / 5 s    none     39     245      200     passes with 93.3
+ *     1.4 / 5 s    none     58     264      200     passes with 100
+ *     1.6 / 5 s    none     94     303      200     passes with 89.7
+ *     1.8 / 6 s    none    128     341      200     75, but nothing for the peak
+ *     1.4 / 18 s   none     58     264      291     80, but nothing for the restart
+ *     1.4 / 2.5 s  58 mm     0     238     1638     the boost was gone before the line stood
+ *
+ * None for the peaks is 335 and 285 N where the design study had 340 and 300: the boost of 18 s gives 291 N here
+ * and must not pass. One in five settings of the field passes (boost × time on a log scale, five holding brakes:
+ * 140 of 720). 1.4 / 5 s passes with modulus, density or lag 10 % up or down, with 92.3 at worst (a denser roll).
  */
 export const STOP_WITHOUT_A_LOOP: Exercise = {
   format: 'evenspan.exercise/1',
