@@ -8,6 +8,12 @@ import * as at from './plant-state';
 import {fixRoll, inertia, outOfRound, radiusSquare} from './roll';
 import {cellSignal, fixSensing} from './sensing';
 
+/**
+ * A held roll breaks loose when the web pulls harder than this times what holds it. Without the margin a brake that
+ * fades toward the web's pull would be crossed at every rounding of the last digit.
+ */
+export const LOOSENS = 1 + 1e-9;
+
 /** Nip speed below which the idlers' drag fades [m/s]. */
 export const DRAG_FULL_MPS = 0.02;
 
@@ -89,7 +95,7 @@ export class Equations {
       n[now.STOP] = 0;
       this.slopes(y, slope);
     }
-    if (omega === 0 && Math.abs(n[now.PULL]!) > n[now.DRAG]!) {
+    if (omega === 0 && Math.abs(n[now.PULL]!) > n[now.DRAG]! * LOOSENS) {
       n[now.SLIDING] = n[now.PULL]! > 0 ? 1 : -1;
       this.slopes(y, slope);
     }

@@ -5,7 +5,7 @@ import {Equations} from './equations';
 import * as now from './evaluation';
 import {Line} from './line';
 import * as at from './plant-state';
-import {endOf, JUMPS, regionOf, rest} from './regions';
+import {endOf, isJustLoose, JUMPS, regionOf, rest} from './regions';
 import {type Grid, Stand, withinTurn} from './stand';
 
 /**
@@ -212,6 +212,7 @@ export class Plant {
     this.rungeKutta();
     const bends = regionOf(this.equations, y) ^ this.region;
     if (bends === 0) return true;
+    if (isJustLoose(this.equations, bends)) return this.cross();
     const deepest = (bends & JUMPS) === 0 ? DEEPEST_KINK : DEEPEST;
     return depth < deepest ? this.halve(depth) : this.cross();
   }

@@ -1,5 +1,5 @@
 import {LEAST_FADE} from './brake';
-import {DRAG_FULL_MPS, type Equations} from './equations';
+import {DRAG_FULL_MPS, type Equations, LOOSENS} from './equations';
 import * as now from './evaluation';
 import * as at from './plant-state';
 
@@ -29,7 +29,7 @@ export function regionOf(equations: Equations, y: Float64Array): number {
   if (n[now.RAW]! > 0) bits |= PULLING;
   if (n[now.ROLL_TENSION]! > 0) bits |= ROLL_PULLED;
   if (n[now.SLIDING] === 0) {
-    if (Math.abs(n[now.PULL]!) > n[now.DRAG]!) bits |= BROKEN_LOOSE;
+    if (Math.abs(n[now.PULL]!) > n[now.DRAG]! * LOOSENS) bits |= BROKEN_LOOSE;
   } else if (y[at.OMEGA]! * n[now.SLIDING]! < 0) bits |= TURNED_BACK;
   if (n[now.FADE]! < 1) bits |= n[now.FADE] === LEAST_FADE ? FADED : FADING;
   if (n[now.SPEED]! > 0) bits |= FORWARD;
@@ -38,6 +38,14 @@ export function regionOf(equations: Equations, y: Float64Array): number {
   if (y[at.WOUND]! <= 0) bits |= ROLL_EMPTY;
   if (equations.hasDancer && isPastStop(equations, y)) bits |= PAST_STOP;
   return bits;
+}
+
+/**
+ * Whether the only bend crossed is that of a roll which the web has just loosened, by less than the margin: a brake
+ * that fades slowly crosses it within rounding, and looking closer would find nothing.
+ */
+export function isJustLoose({now: n}: Equations, bends: number): boolean {
+  return bends === BROKEN_LOOSE && Math.abs(n[now.PULL]!) <= n[now.DRAG]! * (1 + 2 * (LOOSENS - 1));
 }
 
 /** What a state does that has come past a bend: a roll that turned back rests, a dancer lies at its stop. */

@@ -9,7 +9,7 @@ export const BYTES: {
     b: '1271835636d25cef',
     c: 'f965fd3099177ee2',
     d: '88c4b13e301315d2',
-    e: 'e3f1e408cf531083',
+    e: '27e9ba7b9eb56f65',
     f: 'a758ecf9a8a4d6b6',
     g: '93db76bc038d77ba',
     noise: 'c33a12baf5d22e53',

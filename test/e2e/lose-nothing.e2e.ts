@@ -28,11 +28,21 @@ async function undisturbedHash(world: World, {entries, seed, id}: StoredAttempt)
 }
 
 function give(run: ReturnType<typeof startRun>, entry: LogEntry): LogEntry | null {
-  if (entry.kind === 'set') return run.act({set: entry.set});
-  if (entry.kind === 'line') return run.act({line: entry.line});
-  if (entry.kind === 'end') return null;
-  const {n, tick, ...note} = entry;
-  return run.note(note as Parameters<typeof run.note>[0]);
+  switch (entry.kind) {
+    case 'set':
+      return run.act({set: entry.set});
+    case 'line':
+      return run.act({line: entry.line});
+    case 'factor':
+      return run.note({kind: 'factor', factor: entry.factor});
+    case 'pause':
+    case 'resume':
+      return run.note({kind: entry.kind});
+    case 'end':
+      return null; // written after the hash was taken
+    default:
+      throw new Error(`no act of this test is a ${entry.kind}`);
+  }
 }
 
 function gainChanges(entries: readonly LogEntry[]): number {

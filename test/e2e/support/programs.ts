@@ -38,7 +38,7 @@ export function startProgram(
   });
   let printed = '';
   for (const stream of [child.stdout, child.stderr]) {
-    stream?.on('data', (chunk: Buffer) => (printed = (printed + chunk.toString()).slice(-8000)));
+    stream.on('data', (chunk: Buffer) => (printed = (printed + chunk.toString()).slice(-8000)));
   }
   return {child, printed: () => printed};
 }
