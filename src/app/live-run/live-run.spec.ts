@@ -113,6 +113,19 @@ describe('LiveRun', () => {
     expect(run.pauseReason()).toBe('over');
   });
 
+  it('goes no further than its time limit, also when the fastest frame asks for more', async () => {
+    aRun();
+    await run.start({document: aStand(), limitS: 1});
+    run.setFactor(20);
+    run.resume();
+
+    await frames.pass(200);
+    await frames.pass(200);
+
+    expect(run.trace.count).toBe(100);
+    expect(run.view?.tS).toBe(1);
+  });
+
   it('calls back at each frame until it is told to stop', async () => {
     aRun();
     await run.start({document: aStand()});

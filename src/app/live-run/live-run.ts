@@ -31,6 +31,8 @@ export interface LiveRunStart {
   readonly handOverS?: number;
   readonly entries?: readonly LogEntry[];
   readonly throughTick?: number;
+  /** The run goes no further than this [s], however much is asked for. */
+  readonly limitS?: number;
 }
 
 /** One run as the page knows it: asks the plant, keeps the trace, publishes what people see. */
@@ -72,6 +74,7 @@ export class LiveRun {
   private readonly loop: FrameLoop;
   private readonly frameCallbacks = new Set<(view: RunView) => void>();
   private lastReadOutMs = -Infinity;
+  private limitTick = Infinity;
   private acting: Promise<unknown> = Promise.resolve();
 
   constructor(
@@ -100,7 +103,8 @@ export class LiveRun {
     this.state.faults.set([]);
     this.state.failure.set(null);
     this.state.outcome.set({kind: 'running'});
-    const {document, handOverS = 0, entries = [], throughTick = 0} = start;
+    const {document, handOverS = 0, entries = [], throughTick = 0, limitS = Infinity} = start;
+    this.limitTick = Math.round(limitS / 0.01);
     const answer = await this.ask({
       kind: 'start',
       start: {document, entries, throughTick, handOverTick: Math.round(handOverS / 0.01)},
@@ -150,7 +154,9 @@ export class LiveRun {
 
   /** Runs ticks at once, paused or not: single steps, and tests that ask instead of waiting. */
   async advance(ticks: number): Promise<void> {
-    const answer = await this.ask({kind: 'advance', ticks});
+    const allowed = Math.min(ticks, this.limitTick - (this.view?.tick ?? 0));
+    if (allowed <= 0) return;
+    const answer = await this.ask({kind: 'advance', ticks: allowed});
     if (answer?.kind !== 'rows') return;
     this.trace.append(answer.trace);
     this.stand(answer.standing);
