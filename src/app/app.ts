@@ -3,8 +3,11 @@ import {
   Component,
   computed,
   DestroyRef,
+  effect,
   ElementRef,
   inject,
+  Injector,
+  untracked,
 } from '@angular/core';
 import {takeUntilDestroyed} from '@angular/core/rxjs-interop';
 import {MatButtonModule} from '@angular/material/button';
@@ -37,6 +40,7 @@ export class App {
   private readonly element = inject<ElementRef<HTMLElement>>(ElementRef);
   private readonly dialog = inject(MatDialog);
   private readonly updates = inject(SwUpdate);
+  private readonly injector = inject(Injector);
 
   protected readonly entries = computed(() =>
     NAVIGATION.filter((entry) => this.session.may(entry.permission)),
@@ -49,6 +53,12 @@ export class App {
   });
 
   constructor() {
+    let hasRun = false;
+    effect(() => {
+      const mayRun = this.session.may('attempts:run');
+      if (mayRun || hasRun) untracked(() => void this.sendWaiting());
+      hasRun ||= mayRun; // whoever signs out must not go on sending
+    });
     inject(SignInAgain).askBy(() => this.askToSignInAgain());
     inject(Router)
       .events.pipe(
@@ -77,6 +87,12 @@ export class App {
     if (document.activeElement === document.body || document.activeElement?.closest('nav')) {
       heading?.focus({preventScroll: true});
     }
+  }
+
+  /** What an earlier visit could not send goes now, whatever page is open. */
+  private async sendWaiting(): Promise<void> {
+    const {Outbox} = await import('./exercises/outbox/outbox');
+    await this.injector.get(Outbox).sendWaiting();
   }
 
   private async askToSignInAgain(): Promise<boolean> {

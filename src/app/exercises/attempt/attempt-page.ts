@@ -2,6 +2,7 @@ import {
   ChangeDetectionStrategy,
   Component,
   computed,
+  DestroyRef,
   effect,
   inject,
   input,
@@ -9,21 +10,27 @@ import {
   untracked,
 } from '@angular/core';
 import {MatButtonModule} from '@angular/material/button';
-import {Router, RouterLink} from '@angular/router';
-import {type Score} from '#sim-core/index';
-import {written} from '#shared/units';
-import {eventWords} from '#shared/wording/run';
+import {Title} from '@angular/platform-browser';
+import {Router} from '@angular/router';
+import {type LineCommand, type Score} from '#sim-core/index';
 import {LinePanel} from '../../live-run/line-panel/line-panel';
-import {type AllowedSettings, SettingsPanel} from '../../live-run/settings-panel/settings-panel';
+import {SettingsPanel} from '../../live-run/settings-panel/settings-panel';
 import {TimePanel} from '../../live-run/time-panel/time-panel';
 import {TrendChart} from '../../live-run/trend-chart/trend-chart';
 import {WebPath} from '../../live-run/web-path/web-path';
+import {BuildCheck} from '../../platform/build-check';
+import {EventFeed} from '../../platform/event-feed';
 import {Session} from '../../session/session';
-import {PageState} from '../../ui/page-state';
+import {ExerciseApi} from '../exercise-api';
 import {Brief} from '../library/brief';
 import {CriteriaList} from '../library/criteria-list';
+import {Outbox} from '../outbox/outbox';
 import {AttemptStore} from './attempt-store';
+import * as view from './attempt-view';
+import {HandIn} from './hand-in';
 import {interimScore} from './interim-score';
+import {StageNotice} from './stage-notice';
+import {StoppedNotice} from './stopped-notice';
 
 const INTERIM_MS = 1000;
 const SAMPLE_S = 0.01;
@@ -36,60 +43,61 @@ const SAMPLE_S = 0.01;
   imports: [
     Brief,
     CriteriaList,
+    HandIn,
     LinePanel,
     MatButtonModule,
-    PageState,
-    RouterLink,
     SettingsPanel,
+    StageNotice,
+    StoppedNotice,
     TimePanel,
     TrendChart,
     WebPath,
   ],
-  providers: [AttemptStore],
+  providers: [
+    {
+      provide: AttemptStore,
+      useFactory: () => new AttemptStore(inject(ExerciseApi), inject(Outbox)),
+    },
+  ],
   changeDetection: ChangeDetectionStrategy.OnPush,
   host: {'(document:visibilitychange)': 'pauseWhenHidden()'},
 })
 export class AttemptPage {
   protected readonly store = inject(AttemptStore);
-  protected readonly session = inject(Session);
+  private readonly session = inject(Session);
   private readonly router = inject(Router);
+  private readonly feed = inject(EventFeed);
+  private readonly title = inject(Title);
 
   readonly exerciseId = input.required<string>();
   readonly attemptId = input.required<string>();
+  /** Speed of simulated time to begin with, of those the exercise allows. */
+  readonly factor = input<string>();
 
   protected readonly run = this.store.run;
   protected readonly units = this.session.units;
   protected readonly isAsking = signal(false);
   protected readonly interim = signal<Score | null>(null);
 
+  private readonly limitS = computed(() => this.store.exercise()?.limits.simulatedS ?? Infinity);
+  private readonly runS = computed(() => this.run.readOuts()?.tS ?? 0);
+  private readonly isTimeUp = computed(() => this.runS() >= this.limitS() - SAMPLE_S / 2);
   protected readonly stands = computed(() => this.run.readOuts()?.lineStands ?? true);
   protected readonly isOver = computed(
-    () => this.run.outcome().kind !== 'running' || this.isTimeUp(),
+    () =>
+      this.run.outcome().kind !== 'running' ||
+      this.isTimeUp() ||
+      !this.store.hasRoom() ||
+      this.store.stopped()?.code === 'writer-changed',
   );
-  protected readonly isTimeUp = computed(() => {
-    const limitS = this.store.exercise()?.limits.simulatedS ?? Infinity;
-    return (this.run.readOuts()?.tS ?? 0) >= limitS - SAMPLE_S / 2;
+  protected readonly leftText = computed(() => view.timeLeft(this.limitS(), this.runS()));
+  protected readonly allowed = computed(() => {
+    const exercise = this.store.exercise();
+    return exercise === null ? {} : view.allowedSettings(exercise);
   });
-  protected readonly leftText = computed(() => {
-    const limitS = this.store.exercise()?.limits.simulatedS ?? 0;
-    const left = Math.max(0, Math.ceil(limitS - (this.run.readOuts()?.tS ?? 0)));
-    return `${Math.floor(left / 60)}:${String(left % 60).padStart(2, '0')}`;
-  });
-  protected readonly allowed = computed<AllowedSettings>(() =>
-    Object.fromEntries(
-      (this.store.exercise()?.touch.settings ?? []).map(({key, lowest, highest}) => [
-        key,
-        {lowest, highest},
-      ]),
-    ),
-  );
   protected readonly band = computed(() => {
-    const target = this.store.exercise()?.target;
-    if (target === undefined) return null;
-    return {
-      lowest: target.tensionN - target.toleranceN,
-      highest: target.tensionN + target.toleranceN,
-    };
+    const exercise = this.store.exercise();
+    return exercise === null ? null : view.bandOf(exercise);
   });
   protected readonly topN = computed(() => 2 * (this.store.exercise()?.target.tensionN ?? 100));
   protected readonly shape = computed(() => {
@@ -100,57 +108,53 @@ export class AttemptPage {
       thicknessM: scenario?.web.thicknessM ?? 0.0001,
     };
   });
-  protected readonly spoken = computed(() => {
-    const last = this.run.events().at(-1);
-    if (last === undefined) return '';
-    return last.kind === 'phase'
-      ? `Phase: ${last.phase ?? ''}`
-      : (eventWords(last, this.units()) ?? '');
+  protected readonly spoken = computed(() => view.spokenOf(this.run.events().at(-1), this.units()));
+  protected readonly ending = computed(() =>
+    this.store.hasRoom()
+      ? view.endingOf(this.run.outcome(), this.isTimeUp(), this.units())
+      : 'This exercise allows no more changes. Let it run on, or hand in what you have.',
+  );
+  protected readonly waitsForContinue = computed(() => {
+    const stage = this.store.stage();
+    return stage.kind === 'ready' && stage.isResumed && this.run.pauseReason() === 'notStarted';
   });
-  protected readonly ending = computed(() => {
-    const outcome = this.run.outcome();
-    if (outcome.kind === 'webBroke') {
-      const reached = outcome.tensionN ?? NaN;
-      return `The web broke at ${outcome.atS.toFixed(1)} s, at ${written('tension', reached, this.units())}. Hand in what you have.`;
-    }
-    if (outcome.kind !== 'running') return 'The run is over. Hand in what you have.';
-    return this.isTimeUp() ? 'The time of this exercise is used up. Hand in what you have.' : '';
-  });
-  protected readonly sendingText = computed(() => {
-    const state = this.store.sender();
-    const unsent = this.store.unsent();
-    if (state.kind === 'stopped') return '';
-    return unsent === 0 ? 'Everything is saved.' : `${unsent} not sent yet, kept on this device.`;
-  });
-  protected readonly stopped = computed(() => {
-    const state = this.store.sender();
-    return state.kind === 'stopped' ? state.failure : null;
-  });
+  protected readonly sendingText = computed(() =>
+    this.store.stopped() === null ? view.unsentWords(this.store.unsent()) : '',
+  );
 
   constructor() {
+    const letReload = inject(BuildCheck).holdDuringRun();
+    inject(DestroyRef).onDestroy(() => {
+      this.store.close();
+      letReload();
+    });
     effect(() => {
       const id = this.attemptId();
       untracked(() => void this.store.open(id));
     });
     effect(() => {
-      if (this.store.stage().kind === 'handedIn') {
-        void this.router.navigate(
-          ['/exercises', this.exerciseId(), 'attempts', this.attemptId(), 'result'],
-          {replaceUrl: true},
-        );
-      }
+      const title = this.store.exercise()?.title;
+      if (title !== undefined) this.title.setTitle(`${title} · Evenspan`);
+    });
+    effect(() => {
+      if (this.store.stage().kind === 'handedIn') untracked(() => void this.showResult());
     });
     effect(() => {
       if (this.isTimeUp()) untracked(() => this.run.halt('over'));
     });
     effect((onCleanup) => {
       if (this.store.stage().kind !== 'ready') return;
-      const timer = setInterval(() => this.scoreSoFar(), INTERIM_MS);
-      onCleanup(() => clearInterval(timer));
+      untracked(() => this.useFactor());
+      onCleanup(this.followRun());
     });
   }
 
-  protected command(line: Parameters<LiveLine>[0]): void {
+  protected handIn(): void {
+    this.isAsking.set(false);
+    void this.store.handIn();
+  }
+
+  protected command(line: LineCommand): void {
     this.store.goOn();
     void this.store.act({line});
   }
@@ -160,12 +164,35 @@ export class AttemptPage {
     else if (!document.hidden && this.run.pauseReason() === 'tabHidden') this.run.resume();
   }
 
+  private useFactor(): void {
+    const factor = Number(this.factor());
+    const isAllowed = this.store.exercise()?.time.factors.includes(factor) ?? false;
+    if (isAllowed && this.run.factor() !== factor) this.store.setFactor(factor);
+  }
+
+  /** Marks as they stand, and nudges about who writes; returns how to stop both. */
+  private followRun(): () => void {
+    const timer = setInterval(() => this.scoreSoFar(), INTERIM_MS);
+    const nudges = this.feed.follow([`attempt:${this.attemptId()}`]).subscribe((nudge) => {
+      if (nudge?.kind === 'writer-changed') this.store.lookForWriter();
+    });
+    return () => {
+      clearInterval(timer);
+      nudges.unsubscribe();
+    };
+  }
+
   private scoreSoFar(): void {
     const exercise = this.store.exercise();
     if (exercise === null || this.run.pauseReason() === 'notStarted') return;
     const endedEarly = this.run.outcome().kind !== 'running';
     this.interim.set(interimScore(exercise, this.run.trace, this.run.entries(), endedEarly));
   }
-}
 
-type LiveLine = (line: Parameters<LinePanel['commanded']['emit']>[0]) => void;
+  private async showResult(): Promise<void> {
+    await this.router.navigate(
+      ['/exercises', this.exerciseId(), 'attempts', this.attemptId(), 'result'],
+      {replaceUrl: true},
+    );
+  }
+}

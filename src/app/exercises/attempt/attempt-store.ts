@@ -1,242 +1,240 @@
-import {computed, DestroyRef, inject, Injectable, signal} from '@angular/core';
-import {type Act, type Scenario} from '#sim-core/index';
-import {LiveRun} from '../../live-run/live-run';
+import {computed, signal} from '@angular/core';
+import {type Act, type LogEntry, type Note, type Scenario} from '#sim-core/index';
+import {LiveRun, type Recorder} from '../../live-run/live-run';
 import {type ApiFailure, toApiFailure} from '../../platform/api-failure';
-import {BuildCheck} from '../../platform/build-check';
-import {Connection} from '../../platform/connection';
-import {
-  type KeptAttempt,
-  openPersonDatabase,
-  type PersonDatabase,
-} from '../../platform/person-database';
-import {Session} from '../../session/session';
-import {ExerciseApi} from '../exercise-api';
-import {AttemptKeeper} from '../outbox/attempt-keeper';
-import {holdAttempt} from '../outbox/attempt-lock';
-import {AttemptSender, type SenderState} from '../outbox/attempt-sender';
-import {joinLogs, type TakenUp} from './take-up';
+import {type KeptAttempt} from '../../platform/person-database';
+import {type ExerciseApi} from '../exercise-api';
+import {type HeldAttempt} from '../outbox/held-attempt';
+import {type Outbox} from '../outbox/outbox';
+import {Beat} from './beat';
+import {openAttempt} from './open-attempt';
+import {type TakenUp} from './take-up';
+import {writeFromHere} from './write-from-here';
 
 const NOTE_TICK_MS = 1000;
 
 /** Where the page stands: what it shows. */
 export type Stage =
-  | {readonly kind: 'loading'}
+  | {readonly kind: 'loading' | 'otherTab' | 'otherDevice' | 'differs'}
   | {readonly kind: 'failed'; readonly failure: ApiFailure}
-  | {readonly kind: 'otherTab'}
-  | {readonly kind: 'otherDevice'}
-  | {readonly kind: 'differs'}
+  /** The run can't go on here, though what was kept is safe. */
+  | {readonly kind: 'broken'; readonly why: 'notKept' | 'stopped'}
   | {readonly kind: 'ready'; readonly isResumed: boolean}
-  | {readonly kind: 'handingIn'}
-  | {readonly kind: 'handedIn'};
+  | {readonly kind: 'handingIn' | 'handedIn'};
+
+type Api = Pick<ExerciseApi, 'attempt' | 'log' | 'sendBeat' | 'takeOver'>;
 
 /** One attempt while it is run: the run, what is kept here, and its way to the server. */
-@Injectable()
 export class AttemptStore {
-  private readonly api = inject(ExerciseApi);
-  private readonly session = inject(Session);
-  private readonly connection = inject(Connection);
-
-  readonly run = new LiveRun((entry) => this.keep(entry));
+  readonly run: LiveRun;
 
   private readonly stageNow = signal<Stage>({kind: 'loading'});
-  private readonly senderNow = signal<SenderState>({kind: 'idle'});
   private readonly kept = signal<KeptAttempt | null>(null);
+  private readonly held = signal<HeldAttempt | null>(null);
 
-  readonly stage = this.stageNow.asReadonly();
-  readonly sender = this.senderNow.asReadonly();
+  readonly stage = computed<Stage>(() => {
+    if (this.held()?.isHandedIn() === true) return {kind: 'handedIn'};
+    const stage = this.stageNow();
+    const hasStopped = stage.kind === 'ready' && this.run.failure() !== null;
+    return hasStopped ? {kind: 'broken', why: 'stopped'} : stage;
+  });
   readonly exercise = computed(() => this.kept()?.document ?? null);
-  readonly unsent = this.connection.entriesWaiting;
+  readonly unsent = computed(() => this.held()?.unsent() ?? 0);
+  /** Why nothing more is sent until somebody decides. */
+  readonly stopped = computed(() => {
+    const sending = this.held()?.sending();
+    return sending?.kind === 'stopped' ? sending.failure : null;
+  });
+  /** Whether the log has room for another entry beside the end. */
+  readonly hasRoom = computed(
+    () => this.run.entries().length < (this.exercise()?.limits.entries ?? Infinity),
+  );
 
-  private keeper: AttemptKeeper | null = null;
-  private sending: AttemptSender | null = null;
-  private letGo: (() => void) | null = null;
-  private beatTimer: ReturnType<typeof setTimeout> | undefined;
+  private beat: Beat | null = null;
+  private readonly noteTimer = setInterval(() => void this.noteTick(), NOTE_TICK_MS);
+  private attemptId = '';
+  private isClosed = false;
 
-  constructor() {
-    const letReload = inject(BuildCheck).holdDuringRun();
-    const noteTimer = setInterval(() => void this.noteTick(), NOTE_TICK_MS);
-    const sendNow = (): void => this.sending?.sendNow();
-    addEventListener('online', sendNow);
-    inject(DestroyRef).onDestroy(() => {
-      removeEventListener('online', sendNow);
-      clearInterval(noteTimer);
-      clearTimeout(this.beatTimer);
-      void this.noteTick();
-      this.sending?.close();
-      this.run.close();
-      this.letGo?.();
-      letReload();
-    });
+  constructor(
+    private readonly api: Api,
+    private readonly outbox: Outbox,
+    makeRun: (record: Recorder) => LiveRun = (record) => new LiveRun(record),
+  ) {
+    this.run = makeRun((entry) => this.keep(entry));
   }
 
   /** Takes the attempt up where it is: server's log, this device's entries, the last tick shown. */
   async open(attemptId: string): Promise<void> {
+    this.attemptId = attemptId;
     this.stageNow.set({kind: 'loading'});
-    try {
-      this.letGo ??= await holdAttempt(attemptId);
-      if (this.letGo === null) this.stageNow.set({kind: 'otherTab'});
-      else await this.takeUp(attemptId, await this.database());
-    } catch (error) {
-      this.stageNow.set({kind: 'failed', failure: toApiFailure(error)}); // offline, not found …
-    }
+    await this.orFail(async () => {
+      const held = await this.outbox.hold(attemptId);
+      if (this.isClosed) this.outbox.leave(attemptId);
+      else if (held === null) this.stageNow.set({kind: 'otherTab'});
+      else await this.takeUp(held);
+    });
   }
 
-  /** Goes on here; the other device is told when it next writes. */
-  async takeOver(attemptId: string): Promise<void> {
-    try {
-      const writerKey = crypto.randomUUID();
-      const attempt = await this.api.takeOver(attemptId, writerKey);
-      const keeper = new AttemptKeeper(await this.database(), attemptId);
-      await keeper.forget(); // the server's log counts from here on
-      await keeper.save({
-        id: attempt.id,
-        exerciseId: attempt.exercise.id,
-        writerKey,
-        document: attempt.exerciseDocument,
-        seed: attempt.seed,
-        ackedBatch: attempt.lastBatch,
-        throughTick: attempt.throughTick,
-      });
-      await this.open(attemptId);
-    } catch (error) {
-      this.stageNow.set({kind: 'failed', failure: toApiFailure(error)});
-    }
+  /** Goes on here with what both sides have; the other device is told when it next writes. */
+  async takeOver(): Promise<void> {
+    this.stageNow.set({kind: 'loading'});
+    await this.orFail(async () => {
+      const held = await this.outbox.hold(this.attemptId);
+      if (held === null) this.stageNow.set({kind: 'otherTab'});
+      else if (await writeFromHere(this.api, held.keeper)) await this.takeUp(held);
+      else this.stageNow.set({kind: 'handedIn'});
+    });
   }
 
-  act(act: Act): Promise<unknown> {
-    return this.run.act(act);
+  /** Goes on with the server's log; what this device has more is set aside. */
+  async goOnWithServer(): Promise<void> {
+    await this.held()?.keeper.setAside(new Date().toISOString());
+    await this.takeOver();
+  }
+
+  /** Resolves when the act is kept, or refused (see `run.faults`). */
+  async act(act: Act): Promise<void> {
+    if (!this.hasRoom() || this.stageNow().kind !== 'ready') return;
+    await this.orNotKept(this.run.act(act));
   }
 
   goOn(): void {
-    const reason = this.run.pauseReason();
-    if (reason === 'byPerson') void this.run.note({kind: 'resume'});
+    if (this.isPausedInLog()) this.note({kind: 'resume'});
     this.run.resume();
   }
 
   pause(): void {
-    void this.run.note({kind: 'pause'});
+    this.note({kind: 'pause'});
     this.run.halt('byPerson');
   }
 
   setFactor(factor: number): void {
     this.run.setFactor(factor);
-    void this.run.note({kind: 'factor', factor});
+    this.note({kind: 'factor', factor});
   }
 
   /** Hands in: the `end` entry is kept, then everything goes to the server. */
   async handIn(): Promise<void> {
     this.stageNow.set({kind: 'handingIn'});
-    await this.run.end();
-    this.sending?.sendNow();
+    const end = await this.orNotKept(this.run.end());
+    if (end !== null) await this.sendAgain();
+    else if (this.stageNow().kind === 'handingIn') this.breakOff('stopped');
   }
 
-  retrySending(): void {
-    this.sending?.sendNow();
+  /** A person asked: send at once what waits. */
+  async sendAgain(): Promise<void> {
+    await this.held()?.sendWaiting();
   }
 
-  private async takeUp(attemptId: string, database: PersonDatabase): Promise<void> {
-    const keeper = new AttemptKeeper(database, attemptId);
-    const here = await keeper.read();
-    const server = await this.readServer(attemptId, here !== undefined);
-    if (server !== null && server.attempt.state !== 'running') {
-      await keeper.forget();
-      this.stageNow.set({kind: 'handedIn'});
+  /** Something was told about this attempt: perhaps another device has it now. */
+  lookForWriter(): void {
+    void this.beat?.now();
+  }
+
+  close(): void {
+    this.isClosed = true;
+    clearInterval(this.noteTimer);
+    this.beat?.close();
+    void this.noteTick();
+    this.run.close();
+    this.outbox.leave(this.attemptId);
+  }
+
+  private async takeUp(held: HeldAttempt): Promise<void> {
+    this.held.set(held);
+    const opened = await openAttempt(this.api, held.keeper);
+    if (opened.kind === 'handedIn') await held.keeper.forget();
+    if (opened.kind === 'ready') await this.goOnFrom(held, opened.kept, opened.log);
+    else this.stageNow.set({kind: opened.kind});
+  }
+
+  private async goOnFrom(held: HeldAttempt, kept: KeptAttempt, log: TakenUp): Promise<void> {
+    this.kept.set(kept);
+    const {scenario, handOverS, limits} = kept.document;
+    const document: Scenario = {...scenario, seed: kept.seed};
+    const isStarted = await this.run.start({
+      document,
+      handOverS,
+      limitS: limits.simulatedS,
+      ...log,
+    });
+    if (!isStarted) {
+      this.breakOff('stopped');
       return;
     }
-    if (here === undefined) {
-      this.stageNow.set({kind: 'otherDevice'});
-      return;
-    }
-    const kept = {entries: await keeper.entries(), throughTick: here.throughTick};
-    const joined = server === null ? kept : joinLogs({server: server.log, here: kept});
-    if (joined === null) {
-      this.stageNow.set({kind: 'differs'});
-      return;
-    }
-    if (server !== null) await keeper.acknowledge(server.log.lastBatch);
-    await this.goOnFrom(keeper, here, joined);
-  }
-
-  /** What the server has; null without a connection, when this device can go on by itself. */
-  private async readServer(attemptId: string, isKeptHere: boolean) {
-    try {
-      const [attempt, log] = await Promise.all([
-        this.api.attempt(attemptId),
-        this.api.log(attemptId),
-      ]);
-      return {attempt, log};
-    } catch (error) {
-      const failure = toApiFailure(error);
-      if (failure.code === 'offline' && isKeptHere) return null;
-      throw failure;
-    }
-  }
-
-  private async goOnFrom(keeper: AttemptKeeper, here: KeptAttempt, log: TakenUp): Promise<void> {
-    this.keeper = keeper;
-    this.kept.set(here);
-    const document: Scenario = {...here.document.scenario, seed: here.seed};
-    await this.run.start({document, handOverS: here.document.handOverS, ...log});
-    this.startSending(here.id, keeper, here.writerKey);
+    held.tick = () => this.run.view?.tick ?? 0;
+    await held.sendWaiting();
+    this.startBeats(held, kept.writerKey);
     // An `end` that was kept but not sent: the attempt only has to go out.
     const isEnded = log.entries.at(-1)?.kind === 'end';
     if (isEnded) this.run.halt('over');
     this.stageNow.set(
-      isEnded ? {kind: 'handingIn'} : {kind: 'ready', isResumed: log.throughTick > 0},
+      isEnded
+        ? {kind: 'handingIn'}
+        : {kind: 'ready', isResumed: log.throughTick > 0 || log.entries.length > 0},
     );
+    const factor = log.entries.findLast((entry) => entry.kind === 'factor');
+    if (factor !== undefined) this.run.setFactor(factor.factor);
   }
 
-  private startSending(attemptId: string, keeper: AttemptKeeper, writerKey: string): void {
-    this.sending?.close();
-    this.sending = new AttemptSender({
-      keeper,
-      post: (batch) => this.api.sendBatch(attemptId, batch),
+  private startBeats(held: HeldAttempt, writerKey: string): void {
+    this.beat?.close();
+    this.beat = new Beat({
+      post: (throughTick) => this.api.sendBeat(this.attemptId, writerKey, throughTick),
       tick: () => this.run.view?.tick ?? 0,
-      told: (state, unsent) => {
-        this.senderNow.set(state);
-        this.connection.setEntriesWaiting(unsent);
-      },
-      handedIn: () => {
-        this.connection.setEntriesWaiting(0);
-        void keeper.forget();
-        this.stageNow.set({kind: 'handedIn'});
+      isRunning: () => this.run.pauseReason() === null,
+      writerChanged: (failure) => {
+        this.run.halt('over');
+        void held.stop(failure);
       },
     });
-    this.sending.sendNow();
-    this.beatLater(attemptId, writerKey, 10);
+    void this.beat.now();
   }
 
-  private beatLater(attemptId: string, writerKey: string, seconds: number): void {
-    clearTimeout(this.beatTimer);
-    this.beatTimer = setTimeout(() => void this.beat(attemptId, writerKey), seconds * 1000);
+  private async keep(entry: LogEntry): Promise<void> {
+    const held = this.held();
+    if (held === null) throw new Error('an attempt that is not held was acted on');
+    await held.add(entry);
   }
 
-  private async beat(attemptId: string, writerKey: string): Promise<void> {
-    let nextS = 10;
-    const isRunning = this.run.pauseReason() === null && this.connection.isOnline();
-    if (isRunning) {
-      try {
-        const reply = await this.api.sendBeat(attemptId, writerKey, this.run.view?.tick ?? 0);
-        nextS = reply.nextBeatS;
-      } catch {
-        // ApiFailure: a beat that is lost costs nothing; batches tell what is wrong
-      }
+  private note(note: Note): void {
+    if (this.hasRoom()) void this.orNotKept(this.run.note(note));
+  }
+
+  private isPausedInLog(): boolean {
+    const isPause = ({kind}: LogEntry): boolean => kind === 'pause' || kind === 'resume';
+    return this.run.entries().findLast(isPause)?.kind === 'pause';
+  }
+
+  /** An entry that this device can't keep must not count as done: the run ends where the kept log ends. */
+  private async orNotKept(keeping: Promise<LogEntry | null>): Promise<LogEntry | null> {
+    try {
+      return await keeping;
+    } catch (error) {
+      // DOMException: the disk is full, or the browser closed its database
+      if (!(error instanceof DOMException)) throw error;
+      this.breakOff('notKept');
+      return null;
     }
-    this.beatLater(attemptId, writerKey, nextS);
   }
 
-  private async keep(entry: Parameters<AttemptKeeper['add']>[0]): Promise<void> {
-    await this.keeper?.add(entry);
-    this.connection.setEntriesWaiting((await this.keeper?.countUnsent()) ?? 0);
-    this.sending?.wake();
+  private async orFail(work: () => Promise<void>): Promise<void> {
+    try {
+      await work();
+    } catch (error) {
+      this.stageNow.set({kind: 'failed', failure: toApiFailure(error)}); // offline, not found …
+    }
+  }
+
+  private breakOff(why: 'notKept' | 'stopped'): void {
+    this.run.halt('over');
+    this.stageNow.set({kind: 'broken', why});
   }
 
   private async noteTick(): Promise<void> {
     const tick = this.run.view?.tick;
-    if (tick !== undefined && this.stageNow().kind === 'ready') await this.keeper?.noteTick(tick);
-  }
-
-  private database(): Promise<PersonDatabase> {
-    return openPersonDatabase(this.session.me()?.id ?? 'nobody');
+    if (tick !== undefined && this.stageNow().kind === 'ready') {
+      await this.held()?.keeper.noteTick(tick);
+    }
   }
 }

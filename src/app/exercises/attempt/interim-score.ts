@@ -1,7 +1,12 @@
-import {commandsOf, type LogEntry, type Score, scoreRun, type TraceRows} from '#sim-core/index';
+import {
+  commandsOf,
+  type LogEntry,
+  type Score,
+  scoreRun,
+  settingsOf,
+  type TraceRows,
+} from '#sim-core/index';
 import {type ExerciseToRun} from '#shared/exercises/exercise';
-
-const SAMPLE_S = 0.01;
 
 /**
  * Marks so far, from what the controller measured: the true tension stays hidden until the attempt is handed in.
@@ -20,10 +25,11 @@ export function interimScore(
       return rows.at(row, column === 'tensionN' ? 'measuredN' : column);
     },
   };
+  const {sampleS} = settingsOf(exercise.scenario.controller);
   return scoreRun(exercise, {
     rows: measured,
-    commands: commandsOf(exercise.scenario, entries, SAMPLE_S),
-    sampleS: SAMPLE_S,
+    commands: commandsOf(exercise.scenario, entries, sampleS),
+    sampleS,
     endedEarly,
   });
 }

@@ -13,15 +13,17 @@ export interface LogSides {
 }
 
 /**
- * Joins both sides: the server's log is the beginning of what this device has, or the other way round. Null
+ * Joins both sides by the entries' numbers: what both have is the same, and together they have no gap. Null
  * when they differ: then another device wrote, and the server's log is the one that counts.
  */
 export function joinLogs({server, here}: LogSides): TakenUp | null {
-  const shared = Math.min(server.entries.length, here.entries.length);
-  for (let place = 0; place < shared; place++) {
-    if (!isSame(server.entries[place], here.entries[place])) return null;
+  const entries = [...server.entries];
+  for (const entry of here.entries) {
+    const known = entries[entry.n - 1];
+    if (known === undefined && entry.n !== entries.length + 1) return null;
+    if (known !== undefined && !isSame(known, entry)) return null;
+    entries[entry.n - 1] = entry;
   }
-  const entries = server.entries.length >= here.entries.length ? server.entries : here.entries;
   const throughTick = Math.max(server.throughTick, here.throughTick, entries.at(-1)?.tick ?? 0);
   return {entries, throughTick};
 }

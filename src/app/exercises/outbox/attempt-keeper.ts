@@ -1,10 +1,7 @@
 import {type Batch, type Entry} from '#shared/attempts/attempt';
 import {type LogEntry} from '#sim-core/index';
 import {type KeptAttempt, type PersonDatabase} from '../../platform/person-database';
-
-/** Limits of one batch: the server takes 500 entries and 64 kB; some room is left for the frame around them. */
-const MOST_ENTRIES = 500;
-const MOST_BYTES = 60_000;
+import {fitting} from './batch-size';
 
 /** Keeps one attempt safe on this device: its entries first, then the batches they travel in. */
 export class AttemptKeeper {
@@ -22,8 +19,8 @@ export class AttemptKeeper {
   }
 
   /** Notes how far the run was shown; never goes back. */
-  async noteTick(throughTick: number): Promise<void> {
-    await this.change((attempt) => ({
+  noteTick(throughTick: number): Promise<void> {
+    return this.change((attempt) => ({
       ...attempt,
       throughTick: Math.max(attempt.throughTick, throughTick),
     }));
@@ -35,7 +32,7 @@ export class AttemptKeeper {
   }
 
   /** The oldest batch the server has not confirmed; fixes one from what waits when there is none. */
-  async nextBatch(throughTick: number): Promise<Batch | null> {
+  async nextBatch(shownTick: number): Promise<Batch | null> {
     const change = this.database.transaction(['attempts', 'batches', 'waiting'], 'readwrite');
     const attempt = await change.objectStore('attempts').get(this.attemptId);
     if (attempt === undefined) return null;
@@ -53,12 +50,12 @@ export class AttemptKeeper {
       await change.done;
       return null;
     }
-    // What is left for later must not lie before the tick this batch claims.
-    const isAll = entries.length === waiting.length;
+    // What is left for later must not lie before the tick this batch claims; nothing comes after an end.
+    const claimsAll = entries.length === waiting.length && last.kind !== 'end';
     const batch: Batch = {
       writerKey: attempt.writerKey,
       number,
-      throughTick: isAll && last.kind !== 'end' ? Math.max(last.tick, throughTick) : last.tick,
+      throughTick: claimsAll ? Math.max(last.tick, shownTick, attempt.throughTick) : last.tick,
       entries: entries as Entry[],
     };
     await change.objectStore('batches').put({attemptId: this.attemptId, number, batch});
@@ -84,25 +81,41 @@ export class AttemptKeeper {
     return this.change((attempt) => ({...attempt, writerKey}));
   }
 
+  /** Keeps the server's log as the beginning of this attempt: another device wrote it. */
+  useBase(base: readonly LogEntry[]): Promise<void> {
+    return this.change((attempt) => ({...attempt, base}));
+  }
+
   /** Entries that only this device has. */
   async countUnsent(): Promise<number> {
     const attempt = await this.read();
     if (attempt === undefined) return 0;
-    const batches = await this.database.getAll('batches', this.range());
-    const inBatches = batches
-      .filter(({number}) => number > attempt.ackedBatch)
-      .reduce((count, {batch}) => count + batch.entries.length, 0);
+    const batches = await this.database.getAll('batches', this.range(attempt.ackedBatch + 1));
+    const inBatches = batches.reduce((count, {batch}) => count + batch.entries.length, 0);
     return inBatches + (await this.database.count('waiting', this.range()));
   }
 
   /** Every entry this device has of the attempt, in order. */
   async entries(): Promise<LogEntry[]> {
+    const attempt = await this.read();
     const batches = await this.database.getAll('batches', this.range());
     const waiting = await this.database.getAll('waiting', this.range());
-    return [
+    const byNumber = new Map<number, LogEntry>();
+    for (const entry of [
+      ...(attempt?.base ?? []),
       ...batches.flatMap(({batch}) => batch.entries as LogEntry[]),
       ...waiting.map(({entry}) => entry),
-    ].sort((a, b) => a.n - b.n);
+    ]) {
+      byNumber.set(entry.n, entry);
+    }
+    return [...byNumber.values()].sort((a, b) => a.n - b.n);
+  }
+
+  /** Another device's log counts: what this one has is kept apart and sent no more. */
+  async setAside(setAsideAt: string): Promise<void> {
+    const entries = await this.entries();
+    await this.database.add('setAside', {attemptId: this.attemptId, setAsideAt, entries});
+    await this.forget();
   }
 
   /** The attempt is over and the server has all of it. */
@@ -121,19 +134,7 @@ export class AttemptKeeper {
     await change.done;
   }
 
-  private range(): IDBKeyRange {
-    return IDBKeyRange.bound([this.attemptId, 0], [this.attemptId, Infinity]);
+  private range(first = 0): IDBKeyRange {
+    return IDBKeyRange.bound([this.attemptId, first], [this.attemptId, Infinity]);
   }
-}
-
-/** As many of the first entries as one batch may hold. */
-function fitting(entries: readonly LogEntry[]): LogEntry[] {
-  const taken: LogEntry[] = [];
-  let bytes = 0;
-  for (const entry of entries) {
-    bytes += new TextEncoder().encode(JSON.stringify(entry)).length + 1;
-    if (taken.length === MOST_ENTRIES || (taken.length > 0 && bytes > MOST_BYTES)) break;
-    taken.push(entry);
-  }
-  return taken;
 }
