@@ -1,5 +1,5 @@
 import {Problem, PROBLEM_STATUS, PROBLEM_TYPE_PREFIX} from './problem';
-import {changed, refusedAt} from './test-support/changed';
+import {changed, refusedAt, shown} from './test-support/changed';
 
 const sample = {
   type: `${PROBLEM_TYPE_PREFIX}entry-refused`,
@@ -42,7 +42,7 @@ describe('Problem', () => {
     ['retryAfterS', 'soon'],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${JSON.stringify(value)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       expect(refusedAt(Problem, changed(sample, path, value))).toEqual([path]);
     });
 });

@@ -1,5 +1,5 @@
 import {aScenario} from '#sim-core/test-support/a-scenario';
-import {changed, refusedAt} from '../test-support/changed';
+import {changed, refusedAt, shown} from '../test-support/changed';
 import {Attempt, AttemptResult, AttemptSummary, Batch, Beat, Entry, ListQuery} from './attempt';
 
 const id = '0199f0a0-0000-7000-8000-000000000001';
@@ -95,7 +95,7 @@ describe('AttemptResult', () => {
     ['scoredAt', '1 December'],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${JSON.stringify(value)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       expect(refusedAt(AttemptResult, changed(result, path, value))).toEqual([path]);
     });
 });
@@ -118,7 +118,7 @@ describe('AttemptSummary', () => {
     ['score', '93.3'],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${JSON.stringify(value)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       expect(refusedAt(AttemptSummary, changed(summary, path, value))).toEqual([path]);
     });
 });
@@ -141,7 +141,7 @@ describe('Attempt', () => {
     ['writerKey', id],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${JSON.stringify(value)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       expect(refusedAt(Attempt, changed(attempt, path, value))).toEqual([path]);
     });
 });
@@ -205,7 +205,7 @@ describe('Batch', () => {
     ['score', 100],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${String(JSON.stringify(value)).slice(0, 24)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       expect(refusedAt(Batch, changed(batch, path, value))).toEqual([path]);
     });
 });
@@ -235,7 +235,7 @@ describe('ListQuery', () => {
     ['exerciseId', '10'],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${JSON.stringify(value).slice(0, 24)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       expect(refusedAt(ListQuery, {[path]: value})).toEqual([path]);
     });
 });

@@ -1,5 +1,5 @@
 import {aScenario} from '#sim-core/test-support/a-scenario';
-import {changed, refusedAt} from '../test-support/changed';
+import {changed, refusedAt, shown} from '../test-support/changed';
 import {Exercise, ExerciseSummary, ExerciseToRun, Touch} from './exercise';
 
 const touch = {
@@ -69,7 +69,7 @@ describe('Touch', () => {
     ['upsets', []],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${JSON.stringify(value)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       const at = refusedAt(Touch, changed(touch, path, value));
 
       expect(at.length).toBe(1);
@@ -122,7 +122,7 @@ describe('Exercise', () => {
     ['answer', 'boost 1.4'],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${String(JSON.stringify(value)).slice(0, 24)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       const at = refusedAt(Exercise, changed(sample, path, value));
 
       expect(at.length).toBe(1);
@@ -160,7 +160,7 @@ describe('ExerciseSummary', () => {
     ['brief', 'Stop the line.'],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${JSON.stringify(value)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       expect(refusedAt(ExerciseSummary, changed(summary, path, value))).toEqual([path]);
     });
 });

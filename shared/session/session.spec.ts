@@ -1,4 +1,4 @@
-import {changed, refusedAt} from '../test-support/changed';
+import {changed, refusedAt, shown} from '../test-support/changed';
 import {Me, Preferences, SessionState, SignInDraft} from './session';
 
 const me = {
@@ -37,7 +37,7 @@ describe('Preferences', () => {
     ['language', 'en'],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${JSON.stringify(value)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       expect(refusedAt(Preferences, changed(me.preferences, path, value))).toEqual([path]);
     });
 });
@@ -59,7 +59,7 @@ describe('Me', () => {
     ['passwordHash', '$argon2id$'],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${JSON.stringify(value)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       expect(refusedAt(Me, changed(me, path, value))).toEqual([path]);
     });
 });
@@ -79,7 +79,7 @@ describe('SessionState', () => {
     ['demoAccounts.0.id', 1],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${JSON.stringify(value)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       const at = refusedAt(SessionState, changed({me: null, demoAccounts: [account]}, path, value));
 
       expect(at.length).toBeGreaterThan(0);
@@ -108,7 +108,7 @@ describe('SignInDraft', () => {
     ['remember', true],
   ];
   for (const [path, value] of refused)
-    it(`refuses ${String(JSON.stringify(value)).slice(0, 20)} as ${path}`, () => {
+    it(`refuses ${shown(value)} as ${path}`, () => {
       expect(refusedAt(SignInDraft, changed(draft, path, value))).toEqual([path]);
     });
 });

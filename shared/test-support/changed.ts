@@ -21,3 +21,8 @@ export function refusedAt(schema: z.ZodType, document: unknown): string[] {
       : [path.join('.')];
   });
 }
+
+/** The beginning of a value, for the name of a test. */
+export function shown(value: unknown): string {
+  return value === undefined ? 'nothing' : JSON.stringify(value).slice(0, 24);
+}
