@@ -8,12 +8,12 @@ test.describe('the Bench', () => {
     world,
   }) => {
     const firm = await world.organisation();
-    await new SignInScreen(page).signIn(await firm.person('trainee'), '/bench?seed=3&ticks=2000');
+    await new SignInScreen(page).signIn(await firm.person('trainee'), '/bench?seed=3');
+    await page.getByRole('button', {name: 'Small roll'}).click();
     const gain = page.getByRole('textbox', {name: 'Gain', exact: true});
     await gain.fill('5');
     await gain.press('Enter');
-    await page.getByRole('radio', {name: '×5'}).click();
-    await page.getByRole('button', {name: 'Go on'}).click();
+    await page.getByRole('button', {name: 'Start the line'}).click();
 
     const told = page.getByRole('alert').filter({hasText: 'The web broke at'});
     await expect(told).toContainText(/limit 1200 N/);

@@ -40,7 +40,7 @@ for (const theme of ['light', 'dark'] as const) {
       await page.getByText('Newest attempts').waitFor();
       await expectFit(page, 'today');
       await page.goto('/bench?seed=1&ticks=1500');
-      await page.getByRole('button', {name: 'Go on'}).waitFor();
+      await page.getByText('15.0 s').first().waitFor();
       await page.getByRole('button', {name: 'More settings'}).click();
       await expectFit(page, 'bench');
       await page.goto('/exercises');

@@ -115,7 +115,8 @@ export class TrendChart {
       onCleanup(stop);
     });
 
-    const observer = new ResizeObserver(() => this.fit());
+    // In a frame of its own: a plot's new height may change the host's again.
+    const observer = new ResizeObserver(() => requestAnimationFrame(() => this.fit()));
     observer.observe(this.host.nativeElement);
     const stopTheme = onThemeChange(() => {
       this.palette = null;

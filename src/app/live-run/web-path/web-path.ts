@@ -83,9 +83,12 @@ export class WebPath {
   private brokeAtMs: number | null = null;
 
   constructor() {
-    const observer = new ResizeObserver(([entry]) => {
-      if (entry !== undefined) this.width.set(Math.round(entry.contentRect.width));
-    });
+    // In a frame of its own: what follows may change the size again, which the observer would complain about.
+    const observer = new ResizeObserver(([entry]) =>
+      requestAnimationFrame(() => {
+        if (entry !== undefined) this.width.set(Math.round(entry.contentRect.width));
+      }),
+    );
     observer.observe(this.host.nativeElement);
     inject(DestroyRef).onDestroy(() => observer.disconnect());
 
