@@ -27,6 +27,24 @@ describe('units', () => {
     });
   }
 
+  // Exact by definition, worked out in closed form (NIST SP 811): 1 lbf = 0.45359237 kg × 9.80665 m/s², 1 in = 0.0254 m.
+  const exact: readonly [Quantity, number, number][] = [
+    ['tension', 1, 4.4482216152605],
+    ['tensionPerWidth', 1, 175.12683524647636],
+    ['speed', 100, 0.508],
+    ['thickness', 2, 50.8e-6],
+    ['basisWeight', 50, 0.08137379],
+    ['mass', 1, 0.45359237],
+    ['temperature', 32, 0],
+  ];
+  for (const [quantity, shown, si] of exact) {
+    it(`takes ${shown} of US customary ${quantity} for ${si}`, () => {
+      const tolerance = 1e-7 * Math.max(1e-6, Math.abs(si));
+
+      expect(Math.abs(fromPerson(quantity, shown, 'us') - si)).toBeLessThan(tolerance);
+    });
+  }
+
   it('comes back from what it shows, for every quantity and both families', () => {
     for (const quantity of Object.keys(QUANTITIES) as Quantity[]) {
       for (const system of ['si', 'us'] as const) {

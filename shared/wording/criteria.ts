@@ -48,7 +48,7 @@ export function reasonSentence(
         ? 'No start in the time asked for after a stop from job speed, or it was not run up.'
         : 'No stop from job speed was run to its end.';
     case 'brokeBefore':
-      return 'The run ended before this could be measured.';
+      return 'The run ended before this was over, so nothing could be earned.';
     case 'overLimit':
       return `It reached ${seen}. The attempt does not pass, and gets 40 marks at most.`;
     case 'part':

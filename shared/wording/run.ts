@@ -1,4 +1,4 @@
-import {type LogEntry, type Phase, type RunEvent} from '#sim-core/index';
+import {type Disturbance, type LogEntry, type Phase, type RunEvent} from '#sim-core/index';
 import {type UnitSystem, written} from '../units';
 import {settingName, settingValue} from './settings';
 
@@ -27,10 +27,35 @@ export function entryWords(entry: LogEntry, units: UnitSystem): string | null {
         .map(([key, value]) => `${settingName(key)} ${settingValue(key, value, units)}`)
         .join(', ');
     case 'disturb':
-      return 'upset';
+      return upsetWords(entry.disturb, units);
     default:
       return null;
   }
+}
+
+/** What was put in, each thing in a few words: "air lost, zero moved". */
+function upsetWords(disturb: Disturbance, units: UnitSystem): string {
+  const {radiusM, supply, knownLoadN, rippleMps} = disturb;
+  const words = [
+    radiusM !== undefined && `roll change to ${written('diameter', 2 * radiusM, units)}`,
+    supply !== undefined && supplyWords(supply, units),
+    disturb.eccentricityM !== undefined && 'roll out of round',
+    disturb.ovalM !== undefined && 'oval roll',
+    disturb.zeroN !== undefined && 'zero moved',
+    disturb.spanPct !== undefined && 'span moved',
+    disturb.modulusPa !== undefined && 'another stiffness of the web',
+    (rippleMps !== undefined || disturb.rippleHz !== undefined) && 'ripple of the line speed',
+    knownLoadN !== undefined &&
+      (knownLoadN === null
+        ? 'weight taken off'
+        : `weight of ${written('tension', knownLoadN, units)}`),
+  ].filter((each) => each !== false);
+  return words.length === 0 ? 'upset' : words.join(', ');
+}
+
+function supplyWords(supply: number, units: UnitSystem): string {
+  if (supply === 0) return 'air lost';
+  return supply === 1 ? 'air back' : `air at ${written('share', supply, units)}`;
 }
 
 /** What happened by itself, in a few words; null for what needs no mark. */

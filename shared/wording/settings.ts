@@ -1,4 +1,5 @@
 import {type Quantity, type UnitSystem, written} from '../units';
+import {SETTING_MEANINGS, type StandFacts} from './setting-meanings';
 
 /** A setting as people call it, and the quantity it is shown in. */
 export interface SettingWords {
@@ -39,32 +40,70 @@ export const SETTING_WORDS: Readonly<Record<string, SettingWords>> = {
   radiusEnteredM: {name: 'Diameter entered', quantity: 'diameter', times: 2, step: 0.005},
 };
 
-/** A setting's name on the screen. */
+/** Names of the settings that have no field of their own yet. */
+const OTHER_NAMES: Readonly<Record<string, string>> = {
+  mode: 'Mode',
+  derivativeN: 'Derivative filter',
+  setPointWeight: 'Set point weight',
+  startOutputPct: 'Start output',
+  closeAboveN: 'Start output ends above',
+  startHoldS: 'Start output lasts',
+  fastStopGain: 'Boost at a fast stop',
+  fastStopHoldS: 'Boost time at a fast stop',
+  radiusCompensation: 'Gain with diameter',
+  gainByRadius: 'Gain by diameter',
+  radiusSource: 'Diameter comes from',
+  caliperEnteredM: 'Thickness entered',
+  inputSign: 'Sensor direction',
+  antiWindup: 'At a limit',
+  trackingS: 'Tracking time',
+  bumpless: 'Change over without a jump',
+};
+
+/** Quantities of those among them that are numbers. */
+const PLAIN_NUMBERS: Readonly<
+  Record<string, Pick<SettingWords, 'quantity' | 'times' | 'canBeOff'>>
+> = {
+  startOutputPct: {quantity: 'percent'},
+  closeAboveN: {quantity: 'tension'},
+  startHoldS: {quantity: 'time'},
+  fastStopGain: {quantity: 'factor'},
+  fastStopHoldS: {quantity: 'time'},
+  caliperEnteredM: {quantity: 'thickness'},
+  trackingS: {quantity: 'time'},
+};
+
+/** Values that are words or signs, by key and value. */
+const CHOICES: Readonly<Record<string, Readonly<Record<string, string>>>> = {
+  antiWindup: {conditional: 'stops adding', backCalculation: 'gives back', none: 'keeps adding'},
+  inputSign: {'1': 'as wired', '-1': 'turned round'},
+  radiusSource: {
+    true: 'the roll itself',
+    counted: 'counted turns',
+    ratio: 'line and roll speed',
+  },
+};
+
+/** A setting's name on the screen; its key, where there is no such setting. */
 export function settingName(key: string): string {
-  const words = SETTING_WORDS[key];
-  if (words !== undefined) return words.name;
-  if (key === 'mode') return 'Mode';
-  if (key === 'radiusCompensation') return 'Gain with diameter';
-  return key.replace(/(Pct|S|N|M)$/, '').replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`);
+  return SETTING_WORDS[key]?.name ?? OTHER_NAMES[key] ?? key;
 }
 
 /** A setting's value on the screen, with its unit. */
 export function settingValue(key: string, value: unknown, units: UnitSystem): string {
-  const words = SETTING_WORDS[key];
   if (value === null) return 'off';
+  if (typeof value === 'string' || typeof value === 'number') {
+    const choice = CHOICES[key]?.[value];
+    if (choice !== undefined) return choice;
+  }
   if (typeof value === 'boolean') return value ? 'on' : 'off';
   if (typeof value === 'string') return value;
-  if (words === undefined || typeof value !== 'number') return JSON.stringify(value);
+  if (Array.isArray(value)) return value.length === 1 ? '1 point' : `${value.length} points`;
+  if (typeof value !== 'number') return JSON.stringify(value);
+  const words = SETTING_WORDS[key] ?? PLAIN_NUMBERS[key];
+  if (words === undefined) return `${value}`;
   if (value === 0 && words.canBeOff === true) return 'off';
   return written(words.quantity, value * (words.times ?? 1), units);
-}
-
-/** What is needed to say what a value means on this stand. */
-export interface StandFacts {
-  /** Range of the sensor [N]. */
-  readonly rangeN: number;
-  /** Values of the other settings in force. */
-  readonly settings: Readonly<Record<string, unknown>>;
 }
 
 /** One line that says what a value means here, under 25 words; empty where there is nothing to say. */
@@ -74,37 +113,5 @@ export function settingMeaning(
   facts: StandFacts,
   units: UnitSystem,
 ): string {
-  switch (key) {
-    case 'kp': {
-      const oneN = written('tension', units === 'si' ? 1 : 4.4482216152605, units);
-      const perN = ((value * 100) / facts.rangeN) * (units === 'si' ? 1 : 4.4482216152605);
-      return `${oneN} too low gives ${Number(perN.toPrecision(2))} % more brake at once.`;
-    }
-    case 'tiS':
-      return value === 0
-        ? 'Off: a small error stays for good.'
-        : 'Shorter is stronger. A lasting error repeats the first push every such time.';
-    case 'setPointN':
-      return 'The tension that the controller is told to hold.';
-    case 'startRampS':
-      return 'Time from the first share of the set point to all of it.';
-    case 'startFraction':
-      return 'The start ramp begins at this share of the set point.';
-    case 'stopHoldGain':
-      return `While stopping the brake gets ${value.toFixed(2)} times what it had.`;
-    case 'stopHoldS':
-      return value === 0
-        ? 'Off: the loop stays on until the line stands.'
-        : 'Counted from the stop command. Too long locks tension in.';
-    case 'standstillPct':
-      return 'Brake output while the line stands.';
-    case 'tdS':
-      return value === 0
-        ? 'Off, as on most load-cell stands.'
-        : 'Reacts to how fast tension changes; also to noise.';
-    case 'inputFilterS':
-      return value === 0 ? 'Off.' : 'Calms the reading, and delays it.';
-    default:
-      return '';
-  }
+  return SETTING_MEANINGS[key]?.(value, units, facts) ?? '';
 }
