@@ -4,6 +4,7 @@ import {createHash} from 'node:crypto';
 import fs from 'node:fs';
 import path from 'node:path';
 import {fileURLToPath} from 'node:url';
+import {checkBudget} from './budget.mjs';
 import {runChild} from './children.mjs';
 import {lock} from './lock.mjs';
 import {ROOT} from './modules.mjs';
@@ -12,7 +13,14 @@ const DIST = path.join(ROOT, 'dist');
 const BOTH = ['sim-core', 'shared', 'package.json', 'package-lock.json', 'tsconfig.base.json'];
 /** What each half is made from. */
 const SOURCES = {
-  client: [...BOTH, 'src', 'angular.json', 'tsconfig.app.json', 'tsconfig.worker.json'],
+  client: [
+    ...BOTH,
+    'src',
+    'angular.json',
+    'ngsw-config.json',
+    'tsconfig.app.json',
+    'tsconfig.worker.json',
+  ],
   server: [...BOTH, 'server', 'tsconfig.json', 'tools/build.mjs'],
 };
 
@@ -57,6 +65,7 @@ async function buildClient() {
     cwd: ROOT,
     env: {...process.env, NG_CLI_ANALYTICS: 'false', NODE_ENV: 'production'},
   });
+  checkBudget();
 }
 
 /**
