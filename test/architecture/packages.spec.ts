@@ -21,4 +21,13 @@ describe('package-lock.json', () => {
       unchecked.filter(([, each]) => each['inBundle'] !== true).map(([place]) => place),
     ).toEqual([]);
   });
+
+  it('are named with their licences in NOTICE, as far as the program uses them when it runs', () => {
+    const {dependencies} = JSON.parse(read('package.json')) as {dependencies: object};
+    const notice = read('NOTICE');
+
+    const unnamed = Object.keys(dependencies).filter((name) => !notice.includes(`  ${name} `));
+
+    expect(unnamed).toEqual([]);
+  });
 });
