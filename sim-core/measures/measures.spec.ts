@@ -25,12 +25,20 @@ describe('measures', () => {
     expect(peak(trace, {from: 100, to: 200})).toBeNull();
   });
 
-  it('counts the share of rows in tolerance', () => {
-    const trace = aTrace(100, {tensionN: (row) => (row < 25 ? 150 : 200)});
+  it('places a peak that is reached twice where it came first', () => {
+    const trace = aTrace(10, {tensionN: (row) => (row === 3 || row === 7 ? 280 : 200)});
+
+    expect(peak(trace, {from: 0, to: 10})?.place.fromTick).toBe(3);
+  });
+
+  it('counts the share of rows in tolerance, both edges in it', () => {
+    const values = [189.9, 190, 200, 210, 210.1];
+    const trace = aTrace(100, {tensionN: (row) => values[row % 5]!});
 
     expect(shareInTolerance(trace, {from: 0, to: 100}, {lowestN: 190, highestN: 210})?.value).toBe(
-      0.75,
+      0.6,
     );
+    expect(shareInTolerance(trace, {from: 100, to: 200}, {lowestN: 0, highestN: 1})).toBeNull();
   });
 
   it('says when tension stays in the band, and null when it ends outside', () => {
@@ -39,6 +47,8 @@ describe('measures', () => {
 
     expect(onTargetBy(trace, {from: 20, to: 300}, band, SAMPLE_S)?.value).toBeCloseTo(1, 10);
     expect(onTargetBy(trace, {from: 20, to: 100}, band, SAMPLE_S)).toBeNull();
+    const fromAbove = aTrace(300, {tensionN: (row) => (row < 120 ? 250 : 200)});
+    expect(onTargetBy(fromAbove, {from: 20, to: 300}, band, SAMPLE_S)?.value).toBeCloseTo(1, 10);
   });
 
   it('leaves a once-per-turn ripple out of "on target by"', () => {
@@ -88,10 +98,32 @@ describe('measures', () => {
     expect(loops(0.12, 5)).toBe(0.12);
   });
 
-  it('counts a loop that is still there at the end', () => {
+  it('counts a loop of just 5 mm, and one that is still there at the end', () => {
     const trace = aTrace(50, {slackM: (row) => (row < 20 ? 0 : 0.03)});
+    const least = aTrace(50, {slackM: (row) => (row < 20 ? 0 : 0.005)});
 
     expect(loopM(trace, {from: 0, to: 50}, SAMPLE_S)?.value).toBe(0.03);
+    expect(loopM(trace, {from: 0, to: 40}, SAMPLE_S)).toEqual({
+      value: 0.03,
+      place: {fromTick: 20, toTick: 39, trace: 'tension'},
+    });
+    expect(loopM(least, {from: 0, to: 50}, SAMPLE_S)?.value).toBe(0.005);
+  });
+
+  it('gives the longest of several loops, a short snap among them left out', () => {
+    const lengths: readonly (readonly [from: number, to: number, slackM: number])[] = [
+      [10, 20, 0.04],
+      [30, 40, 0.09],
+      [50, 53, 0.3], // 30 ms: too short to count
+      [60, 70, 0.02],
+    ];
+    const slackAt = (row: number): number =>
+      lengths.find(([from, to]) => row >= from && row < to)?.[2] ?? 0;
+
+    expect(loopM(aTrace(100, {slackM: slackAt}), {from: 0, to: 100}, SAMPLE_S)).toEqual({
+      value: 0.09,
+      place: {fromTick: 30, toTick: 39, trace: 'tension'},
+    });
   });
 
   it('adds up the web paid out after the line stood', () => {
@@ -118,9 +150,11 @@ describe('measures', () => {
   });
 
   it('means tension at rest over the last second only', () => {
-    const trace = aTrace(500, {tensionN: (row) => (row < 400 ? 300 : 136)});
+    const trace = aTrace(500, {tensionN: (row) => (row < 400 ? 300 : row < 450 ? 100 : 140)});
 
-    expect(tensionAtRest(trace, {from: 0, to: 500}, SAMPLE_S)?.value).toBe(136);
+    expect(tensionAtRest(trace, {from: 0, to: 500}, SAMPLE_S)?.value).toBe(120);
+    expect(tensionAtRest(trace, {from: 440, to: 460}, SAMPLE_S)?.value).toBe(120);
+    expect(tensionAtRest(trace, {from: 500, to: 600}, SAMPLE_S)).toBeNull();
   });
 
   it('finds the hottest moment', () => {

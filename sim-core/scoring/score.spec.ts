@@ -107,7 +107,7 @@ describe('scoreRun', () => {
       weight: 100,
     };
     const near = facts({tensionN: () => 87, setPointN: () => 87});
-    const far = facts({tensionN: () => 195, setPointN: () => 87});
+    const far = facts({tensionN: (row) => 195 + (row % 2) * 10, setPointN: () => 87});
 
     expect(scored([inTolerance], near).score).toBe(0);
     expect(scored([inTolerance], far).score).toBe(100);
@@ -121,6 +121,7 @@ describe('scoreRun', () => {
     expect(scored([peakOf(EARLY, 100), mustNot], wild)).toEqual(
       jasmine.objectContaining({score: 40, passed: false}),
     );
+    expect(scored([peakOf(EARLY, 100), mustNot], wild, 30).passed).toBeFalse();
     expect(scored([peakOf(EARLY, 30), peakOf(LATE, 70), mustNot], wild).score).toBe(30);
     expect(reasons(scored([mustNot], wild).criteria)).toEqual(['overLimit']);
     expect(reasons(scored([mustNot], edge).criteria)).toEqual(['kept']);

@@ -98,7 +98,7 @@ test.describe('what was run is never lost', () => {
       const offlineFromS = LIMIT_S - (await attempt.leftS());
       await changeGain(attempt, CHANGES);
       await attempt.runAt(5);
-      await attempt.waitUntil(offlineFromS + 21, LIMIT_S);
+      await attempt.waitUntil(offlineFromS + 26, LIMIT_S);
       await expect(attempt.savedText).toContainText('not sent yet');
       const kept = (await world.attempt(attemptId)).entries;
       expect(gainChanges(kept)).toBe(0);
@@ -109,7 +109,7 @@ test.describe('what was run is never lost', () => {
       const again = new AttemptScreen(later);
       await later.goto(address);
       await expect(later.getByText('Your attempt is as you left it.')).toBeVisible();
-      expect(LIMIT_S - (await again.leftS())).toBeGreaterThanOrEqual(offlineFromS + 19);
+      expect(LIMIT_S - (await again.leftS())).toBeGreaterThanOrEqual(offlineFromS + 20);
       await context.setOffline(false);
       await expect(again.savedText).toContainText('Everything is saved');
       await later.getByRole('button', {name: 'Continue'}).click();

@@ -11,7 +11,7 @@ import {openAttempt} from './open-attempt';
 import {type TakenUp} from './take-up';
 import {writeFromHere} from './write-from-here';
 
-const NOTE_TICK_MS = 1000;
+const NOTE_TICK_MS = 250;
 
 /** Where the page stands: what it shows. */
 export type Stage =

@@ -15,7 +15,7 @@ import {MatButtonModule} from '@angular/material/button';
   template: `
     @if (isAsking()) {
       <div class="asking" role="group" aria-label="Hand in?">
-        <span>Hand in now? You can not go on afterwards.</span>
+        <span>Hand in now? You cannot go on afterwards.</span>
         <button #yes matButton="filled" type="button" (click)="handedIn.emit()">
           Yes, hand in
         </button>

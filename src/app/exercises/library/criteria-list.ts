@@ -21,7 +21,7 @@ import {criterionSentence, criterionValue} from '#shared/wording/criteria';
                 @if (row.marks !== null) {
                   <b class="number">{{ row.marks }}</b> of
                 }
-                {{ row.weight }}</span
+                {{ row.weight }} marks</span
               >
             }
           </span>

@@ -8,8 +8,8 @@ import {
   signal,
   untracked,
 } from '@angular/core';
-import {DatePipe, DecimalPipe} from '@angular/common';
 import {MatButtonModule} from '@angular/material/button';
+import {Title} from '@angular/platform-browser';
 import {Router, RouterLink} from '@angular/router';
 import {type AttemptSummary} from '#shared/attempts/attempt';
 import {type ExerciseSummary, type ExerciseToRun} from '#shared/exercises/exercise';
@@ -18,6 +18,7 @@ import {Session} from '../../session/session';
 import {PageState} from '../../ui/page-state';
 import {StartAttempt} from '../attempt/start-attempt';
 import {ExerciseApi} from '../exercise-api';
+import {AttemptLinks} from './attempt-links';
 import {Brief} from './brief';
 import {CriteriaList} from './criteria-list';
 
@@ -26,7 +27,7 @@ import {CriteriaList} from './criteria-list';
   selector: 'app-exercise-page',
   templateUrl: './exercise-page.html',
   styleUrl: './exercise-page.scss',
-  imports: [Brief, CriteriaList, DatePipe, DecimalPipe, MatButtonModule, PageState, RouterLink],
+  imports: [AttemptLinks, Brief, CriteriaList, MatButtonModule, PageState, RouterLink],
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class ExercisePage {
@@ -34,6 +35,7 @@ export class ExercisePage {
   private readonly api = inject(ExerciseApi);
   private readonly starter = inject(StartAttempt);
   private readonly router = inject(Router);
+  private readonly title = inject(Title);
 
   readonly exerciseId = input.required<string>();
 
@@ -44,6 +46,15 @@ export class ExercisePage {
   protected readonly startFailure = signal<ApiFailure | null>(null);
   protected readonly isStarting = signal(false);
   protected readonly mayRun = computed(() => this.session.may('attempts:run'));
+
+  protected readonly passWords = computed(() => {
+    const exercise = this.exercise();
+    if (exercise === null) return '';
+    const {passMark, limits} = exercise;
+    const minutes = Math.round(limits.simulatedS / 6) / 10;
+    const tries = limits.tries === null ? '' : ` ${limits.tries} attempts are allowed.`;
+    return `${passMark} of 100 marks pass, with no line at zero. At most ${minutes} minutes are simulated.${tries}`;
+  });
 
   constructor() {
     effect(() => {
@@ -61,6 +72,7 @@ export class ExercisePage {
       ]);
       this.summary.set(summary);
       this.exercise.set(exercise);
+      this.title.setTitle(`${exercise.title} · Evenspan`);
       this.attempts.set(attempts);
     } catch (error) {
       this.failure.set(toApiFailure(error)); // told on the page, with another try

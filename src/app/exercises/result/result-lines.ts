@@ -56,3 +56,18 @@ export function numbersOf(attempt: Attempt | null): PlaceNumber[] {
       : [{tick: place.fromTick, number: index + 1}],
   );
 }
+
+/** Why a scored attempt does not pass; empty when it does. */
+export function whyNotPassed(attempt: Attempt | null): string {
+  if (attempt?.result == null || attempt.result.passed) return '';
+  const {passMark} = attempt.exerciseDocument;
+  const {criteria, score} = attempt.result;
+  if (criteria.some(({reason}) => reason === 'overLimit')) {
+    return 'A limit that must never be passed was passed.';
+  }
+  if (criteria.some(({reason}) => reason === 'brokeBefore')) {
+    return 'The run ended early, so it does not pass.';
+  }
+  if (score >= passMark) return `${passMark} passes, but one line is at zero.`;
+  return `${passMark} passes, with no line at zero.`;
+}

@@ -164,11 +164,21 @@ export class TrendChart {
     heldEndS: this.heldEndS(),
   }));
 
+  /** Fastest that the log asks for [m/s]: a run that is taken up, or looked at, has its commands behind it. */
+  private readonly askedMps = computed(() =>
+    this.run()
+      .entries()
+      .reduce((fastest, entry) => {
+        const isRun = entry.kind === 'line' && entry.line.command === 'run';
+        return isRun ? Math.max(fastest, entry.line.speedMps) : fastest;
+      }, 0),
+  );
+
   private sceneNow(): TrendScene {
     const {windowS, ...scene} = this.scene();
     const toS = this.endS();
     // Only ever steps up while a run goes on: a scale that breathes cannot be read.
-    const speedMps = this.run().view?.lineTargetMps ?? 0;
+    const speedMps = Math.max(this.run().view?.lineTargetMps ?? 0, this.askedMps());
     if (scene.trace.count < 10) this.topSpeedMps = 1;
     this.topSpeedMps = Math.max(this.topSpeedMps, Math.ceil(1.2 * speedMps));
     return {
