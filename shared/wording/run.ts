@@ -1,4 +1,10 @@
-import {type Disturbance, type LogEntry, type Phase, type RunEvent} from '#sim-core/index';
+import {
+  type Disturbance,
+  type Fault,
+  type LogEntry,
+  type Phase,
+  type RunEvent,
+} from '#sim-core/index';
 import {type UnitSystem, written} from '../units';
 import {settingName, settingValue} from './settings';
 
@@ -78,4 +84,16 @@ export function eventWords(event: RunEvent, units: UnitSystem): string | null {
     default:
       return null;
   }
+}
+
+/** What a screen reader hears of the last event; empty before the first. */
+export function spokenWords(last: RunEvent | undefined, units: UnitSystem): string {
+  if (last === undefined) return '';
+  return last.kind === 'phase' ? `Phase: ${last.phase ?? ''}` : (eventWords(last, units) ?? '');
+}
+
+/** Why an act was not done, the setting called by its name. */
+export function refusalSentence({path, allowed}: Fault): string {
+  const key = path.split('.').at(-1) ?? path;
+  return `Not done: ${settingName(key)} allows ${allowed}.`;
 }

@@ -4,7 +4,7 @@ import {PROBLEM_STATUS, type ProblemCode} from '../problem';
 import {CAUTIONS} from './cautions';
 import {criterionSentence, criterionValue, reasonSentence} from './criteria';
 import {problemSentence} from './problems';
-import {entryWords, eventWords, phaseWord} from './run';
+import {entryWords, eventWords, phaseWord, refusalSentence, spokenWords} from './run';
 import {SETTING_WORDS, settingMeaning, settingName, settingValue} from './settings';
 
 /** Every sentence of the product stays under this many words. */
@@ -220,6 +220,21 @@ describe('a run in words', () => {
       'stopping',
       'manual',
     ]);
+  });
+
+  it('say aloud the last event, and nothing before the first', () => {
+    const stopping: RunEvent = {kind: 'phase', phase: 'stopping', atTick: 5, atS: 0.05};
+
+    expect(spokenWords(stopping, 'si')).toBe('Phase: stopping');
+    expect(spokenWords({kind: 'webBroke', atTick: 1, atS: 0.01}, 'si')).toBe('web broke');
+    expect(spokenWords({kind: 'outputLimitBegan', atTick: 1, atS: 0.01}, 'si')).toBe('');
+    expect(spokenWords(undefined, 'si')).toBe('');
+  });
+
+  it('say why an act was refused by the name of the setting', () => {
+    const fault = {path: 'set.kp', value: 2000, allowed: '0 … 1000 %/%'};
+
+    expect(refusalSentence(fault)).toBe('Not done: Gain allows 0 … 1000 %/%.');
   });
 
   it('tells the tension of a break in the units of the person', () => {

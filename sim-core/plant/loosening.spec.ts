@@ -1,28 +1,17 @@
-import {replay} from '../run/replay';
 import {type LogEntry} from '../run/log';
-import {startRun} from '../run/replay';
+import {replay, startRun} from '../run/replay';
 import {LIVELY} from '../test-support/a-live-log';
+import {aScenario} from '../test-support/a-scenario';
 import {Equations} from './equations';
 
 /**
  * A brake that lets go slowly toward what the web pulls: closed form, at rest tension × radius may not pass what
  * brake and bearings hold, and it comes to lie just there.
  */
-const FULL_ROLL = {
-  format: 'evenspan.scenario/1',
-  name: 'full roll, holding brake that just holds',
-  durationS: 60,
-  seed: 1,
+const FULL_ROLL = aScenario({
   initialTensionN: 200,
   lineRoundS: 1,
-  web: {
-    widthM: 1,
-    thicknessM: 1e-4,
-    modulusPa: 4e9,
-    densityKgM3: 800,
-    breakNPerM: 4000,
-    lossTimeS: 0.005,
-  },
+  web: {widthM: 1, thicknessM: 1e-4, modulusPa: 4e9, densityKgM3: 800, lossTimeS: 0.005},
   roll: {
     coreRadiusM: 0.05,
     radiusM: 0.5,
@@ -40,20 +29,17 @@ const FULL_ROLL = {
     capacityJPerK: 5000,
     conductanceWPerK: 6.67,
   },
-  sensing: {kind: 'loadCell', rangeN: 500, filterS: 0.1},
+  sensing: {rangeN: 500, filterS: 0.1},
   controller: {
     kp: 0.2,
-    tiS: 0.5,
     setPointN: 200,
     startRampS: 4,
     startFraction: 0.7,
-    standstillPct: 40,
     stopHoldS: 6,
     stopHoldGain: 1.4,
   },
   line: [],
-  actions: [],
-};
+});
 
 describe('a held roll that the web loosens', () => {
   it('costs a bounded number of evaluations a tick, also while it lies at the edge', () => {

@@ -1,9 +1,16 @@
 import {expect, type Page} from '@playwright/test';
-import {type LogEntry, type Scenario, startRun} from '#sim-core/index';
+import {type LogEntry, startRun} from '#sim-core/index';
 import {AttemptScreen} from './screens/attempt-screen';
 import {ResultScreen} from './screens/result-screen';
 import {SignInScreen} from './screens/sign-in-screen';
-import {endProgram, freePort, type Program, startProgram, waitUntilReady} from './support/programs';
+import {
+  endProgram,
+  freePort,
+  type Program,
+  programEnvironment,
+  startProgram,
+  waitUntilReady,
+} from './support/programs';
 import {watch} from './support/quiet-page';
 import {type StoredAttempt, test, type World} from './support/world';
 
@@ -12,14 +19,9 @@ const LIMIT_S = 300;
 const CHANGES = 30;
 
 /** Hash of the same acts on an undisturbed run: the engine driven live, act by act, from the same document. */
-async function undisturbedHash(world: World, {entries, seed, id}: StoredAttempt): Promise<string> {
-  const {rows} = await world.client.query<{document: {scenario: Scenario}}>(
-    `select document from exercise_version version join attempt
-     on attempt.exercise_version_id = version.id where attempt.id = $1`,
-    [id],
-  );
-  const run = startRun({...rows[0]!.document.scenario, seed});
-  for (const entry of entries) {
+async function undisturbedHash(world: World, stored: StoredAttempt): Promise<string> {
+  const run = startRun(await world.scenarioOf(stored));
+  for (const entry of stored.entries) {
     run.advance(entry.tick - run.tick);
     const again = give(run, entry);
     if (again !== null) expect(again).toEqual(entry);
@@ -126,13 +128,10 @@ test.describe('what was run is never lost', () => {
     const port = await freePort();
     const url = `http://127.0.0.1:${port}`;
     const start = async (): Promise<Program> => {
-      const program = startProgram('main', {
-        DATABASE_URL: process.env['E2E_DATABASE_URL'] ?? '',
-        SESSION_SECRET: 'only for end-to-end tests, nothing else here',
-        NODE_ENV: 'production',
-        PORT: String(port),
-        LOG_LEVEL: 'warn',
-      });
+      const program = startProgram(
+        'main',
+        programEnvironment(process.env['E2E_DATABASE_URL'] ?? '', port),
+      );
       await waitUntilReady(url, program);
       return program;
     };

@@ -1,5 +1,5 @@
 import {expect} from '@playwright/test';
-import {replay, type Scenario} from '#sim-core/index';
+import {replay} from '#sim-core/index';
 import {AttemptScreen} from './screens/attempt-screen';
 import {ResultScreen} from './screens/result-screen';
 import {SignInScreen} from './screens/sign-in-screen';
@@ -68,18 +68,14 @@ test.describe('an exercise, from sign-in to the score', () => {
 
 /** The browser's hash equals the server's, and moving one entry by one tick makes them differ. */
 async function expectSameHashes(world: World, attemptId: string): Promise<void> {
-  const {entries, hash, hashAgrees, seed, throughTick} = await world.attempt(attemptId);
+  const stored = await world.attempt(attemptId);
+  const {entries, hash, hashAgrees, throughTick} = stored;
   const end = entries.at(-1);
   expect(end?.kind).toBe('end');
   expect(end?.kind === 'end' && end.hash).toBe(hash);
   expect(hashAgrees).toBe(true);
 
-  const {rows} = await world.client.query<{document: {scenario: Scenario}}>(
-    `select document from exercise_version version join attempt
-     on attempt.exercise_version_id = version.id where attempt.id = $1`,
-    [attemptId],
-  );
-  const scenario = {...rows[0]!.document.scenario, seed};
+  const scenario = await world.scenarioOf(stored);
   const line = entries.findIndex((entry) => entry.kind === 'line' && entry.line.command === 'stop');
   const movedStop = entries.map((entry, place) =>
     place === line ? {...entry, tick: entry.tick + 1} : entry,

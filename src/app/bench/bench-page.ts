@@ -12,9 +12,8 @@ import {
 } from '@angular/core';
 import {MatButtonModule} from '@angular/material/button';
 import {MatSlideToggleModule} from '@angular/material/slide-toggle';
-import {eventWords} from '#shared/wording/run';
+import {refusalSentence, spokenWords} from '#shared/wording/run';
 import {written} from '#shared/units';
-import {settingName} from '#shared/wording/settings';
 import {Figures} from '../live-run/figures/figures';
 import {LinePanel} from '../live-run/line-panel/line-panel';
 import {SettingsPanel} from '../live-run/settings-panel/settings-panel';
@@ -97,12 +96,7 @@ export class BenchPage implements OnInit {
   protected readonly isOver = computed(() => this.run.outcome().kind !== 'running');
   protected readonly ending = computed(() => this.describeEnding());
   /** Why the last act was not done. */
-  protected readonly refusals = computed(() =>
-    this.run.faults().map(({path, allowed}) => {
-      const key = path.split('.').at(-1) ?? path;
-      return `Not done: ${settingName(key)} allows ${allowed}.`;
-    }),
-  );
+  protected readonly refusals = computed(() => this.run.faults().map(refusalSentence));
   protected readonly couldNotStart = computed(
     () => this.run.faults().length > 0 || this.run.failure() !== null,
   );
@@ -112,13 +106,7 @@ export class BenchPage implements OnInit {
     return `Your last run is here: ${seconds} s, ${acts} ${acts === 1 ? 'act' : 'acts'}.`;
   });
   /** What screen readers hear: events, not numbers. */
-  protected readonly spoken = computed(() => {
-    const last = this.run.events().at(-1);
-    if (last === undefined) return '';
-    return last.kind === 'phase'
-      ? `Phase: ${last.phase ?? ''}`
-      : (eventWords(last, this.units()) ?? '');
-  });
+  protected readonly spoken = computed(() => spokenWords(this.run.events().at(-1), this.units()));
 
   constructor() {
     const letReload = inject(BuildCheck).holdDuringRun();

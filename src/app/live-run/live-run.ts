@@ -15,6 +15,7 @@ import {
 import {BROWSER_FRAMES, FrameLoop, type FrameSource} from './frame-loop';
 import {openPlant, type PlantLink} from './plant/plant-link';
 import {type FromPlant, type Standing, type ToPlant} from './plant/run-messages';
+import {SAMPLE_S} from './sample-period';
 import {TraceStore} from './trace/trace-store';
 
 /** Read-outs follow at this pace [ms]: people read five numbers a second at most. */
@@ -83,7 +84,7 @@ export class LiveRun {
     private readonly frames: FrameSource = BROWSER_FRAMES,
   ) {
     this.loop = new FrameLoop(
-      {sampleS: 0.01, advance: (ticks) => this.advance(ticks)},
+      {sampleS: SAMPLE_S, advance: (ticks) => this.advance(ticks)},
       () => this.drawFrame(),
       frames,
     );
@@ -104,10 +105,10 @@ export class LiveRun {
     this.state.failure.set(null);
     this.state.outcome.set({kind: 'running'});
     const {document, handOverS = 0, entries = [], throughTick = 0, limitS = Infinity} = start;
-    this.limitTick = Math.round(limitS / 0.01);
+    this.limitTick = Math.round(limitS / SAMPLE_S);
     const answer = await this.ask({
       kind: 'start',
-      start: {document, entries, throughTick, handOverTick: Math.round(handOverS / 0.01)},
+      start: {document, entries, throughTick, handOverTick: Math.round(handOverS / SAMPLE_S)},
     });
     if (answer?.kind !== 'started') return false;
     this.state.document.set(document);

@@ -26,6 +26,17 @@ export function freePort(): Promise<number> {
   });
 }
 
+/** What a program is told: the same secret for all, so that a session outlives the server that began it. */
+export function programEnvironment(databaseUrl: string, port: number): Record<string, string> {
+  return {
+    DATABASE_URL: databaseUrl,
+    SESSION_SECRET: 'only for end-to-end tests, nothing else here',
+    NODE_ENV: 'production',
+    PORT: String(port),
+    LOG_LEVEL: 'warn',
+  };
+}
+
 /** Starts a built program (`main` or `worker`) with these variables on top of the bare ones. */
 export function startProgram(
   name: 'main' | 'worker',

@@ -2,7 +2,7 @@ import {execFileSync} from 'node:child_process';
 import path from 'node:path';
 import {Client} from 'pg';
 import {startPostgres} from '../../../tools/pg.mjs';
-import {endProgram, freePort, startProgram, waitUntilReady} from './programs';
+import {endProgram, freePort, programEnvironment, startProgram, waitUntilReady} from './programs';
 
 const ROOT = path.resolve(import.meta.dirname, '../../..');
 
@@ -13,14 +13,7 @@ export default async function startEverything(): Promise<() => Promise<void>> {
   await ask(cluster.url, `create database ${name}`);
   const databaseUrl = Object.assign(new URL(cluster.url), {pathname: `/${name}`}).href;
   const port = await freePort();
-  const environment = {
-    DATABASE_URL: databaseUrl,
-    SESSION_SECRET: 'only for end-to-end tests, nothing else here',
-    NODE_ENV: 'production',
-    DEMO: '1',
-    PORT: String(port),
-    LOG_LEVEL: 'warn',
-  };
+  const environment = {...programEnvironment(databaseUrl, port), DEMO: '1'};
   execFileSync(process.execPath, ['dist/server/seed.js'], {
     cwd: ROOT,
     env: {PATH: process.env['PATH'], ...environment},

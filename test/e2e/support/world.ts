@@ -1,7 +1,7 @@
 import {randomUUID} from 'node:crypto';
 import {test as base} from '@playwright/test';
 import {Client} from 'pg';
-import {type LogEntry} from '#sim-core/index';
+import {type LogEntry, type Scenario} from '#sim-core/index';
 import {type Role} from '#shared/permissions';
 import {expectNoMisdeeds, type Misdeeds, watch} from './quiet-page';
 
@@ -64,6 +64,16 @@ export class World {
       [id, DEMO_FIRM],
     );
     return new Organisation(this.client, id);
+  }
+
+  /** The scenario of an attempt as it was run: the pinned version's, with the attempt's seed. */
+  async scenarioOf({id, seed}: Pick<StoredAttempt, 'id' | 'seed'>): Promise<Scenario> {
+    const {rows} = await this.client.query<{document: {scenario: Scenario}}>(
+      `select document from exercise_version version join attempt
+       on attempt.exercise_version_id = version.id where attempt.id = $1`,
+      [id],
+    );
+    return {...rows[0]!.document.scenario, seed};
   }
 
   async attempt(attemptId: string): Promise<StoredAttempt> {

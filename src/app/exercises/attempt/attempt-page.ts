@@ -13,7 +13,9 @@ import {MatButtonModule} from '@angular/material/button';
 import {Title} from '@angular/platform-browser';
 import {Router} from '@angular/router';
 import {type LineCommand, type Score} from '#sim-core/index';
+import {refusalSentence, spokenWords} from '#shared/wording/run';
 import {LinePanel} from '../../live-run/line-panel/line-panel';
+import {SAMPLE_S} from '../../live-run/sample-period';
 import {SettingsPanel} from '../../live-run/settings-panel/settings-panel';
 import {TimePanel} from '../../live-run/time-panel/time-panel';
 import {TrendChart} from '../../live-run/trend-chart/trend-chart';
@@ -33,7 +35,6 @@ import {StageNotice} from './stage-notice';
 import {StoppedNotice} from './stopped-notice';
 
 const INTERIM_MS = 1000;
-const SAMPLE_S = 0.01;
 
 /** An exercise while it is run: the Bench with a brief, locks and criteria; the true tension is hidden. */
 @Component({
@@ -108,7 +109,8 @@ export class AttemptPage {
       thicknessM: scenario?.web.thicknessM ?? 0.0001,
     };
   });
-  protected readonly spoken = computed(() => view.spokenOf(this.run.events().at(-1), this.units()));
+  protected readonly spoken = computed(() => spokenWords(this.run.events().at(-1), this.units()));
+  protected readonly refusals = computed(() => this.run.faults().map(refusalSentence));
   protected readonly ending = computed(() =>
     this.store.hasRoom()
       ? view.endingOf(this.run.outcome(), this.isTimeUp(), this.units())

@@ -53,6 +53,8 @@ export class AttemptStore {
   private beat: Beat | null = null;
   private readonly noteTimer = setInterval(() => void this.noteTick(), NOTE_TICK_MS);
   private attemptId = '';
+  /** What was last noted: while time stands the disk is left alone. */
+  private notedTick = -1;
   private isClosed = false;
 
   constructor(
@@ -66,6 +68,7 @@ export class AttemptStore {
   /** Takes the attempt up where it is: server's log, this device's entries, the last tick shown. */
   async open(attemptId: string): Promise<void> {
     this.attemptId = attemptId;
+    this.notedTick = -1;
     this.stageNow.set({kind: 'loading'});
     await this.orFail(async () => {
       const held = await this.outbox.hold(attemptId);
@@ -233,8 +236,8 @@ export class AttemptStore {
 
   private async noteTick(): Promise<void> {
     const tick = this.run.view?.tick;
-    if (tick !== undefined && this.stageNow().kind === 'ready') {
-      await this.held()?.keeper.noteTick(tick);
-    }
+    if (tick === undefined || tick === this.notedTick || this.stageNow().kind !== 'ready') return;
+    this.notedTick = tick;
+    await this.held()?.keeper.noteTick(tick);
   }
 }

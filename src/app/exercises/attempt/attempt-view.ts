@@ -1,7 +1,6 @@
-import {type Outcome, type RunEvent} from '#sim-core/index';
+import {type Outcome} from '#sim-core/index';
 import {type ExerciseToRun} from '#shared/exercises/exercise';
 import {type UnitSystem, written} from '#shared/units';
-import {eventWords} from '#shared/wording/run';
 import {type AllowedSettings} from '../../live-run/settings-panel/settings-panel';
 
 /** Minutes and seconds left of the time limit: "4:07". */
@@ -21,12 +20,6 @@ export function allowedSettings({touch}: ExerciseToRun): AllowedSettings {
 export function bandOf({target}: Pick<ExerciseToRun, 'target'>) {
   const {tensionN, toleranceN} = target;
   return {lowest: tensionN - toleranceN, highest: tensionN + toleranceN};
-}
-
-/** What a screen reader hears of the last event. */
-export function spokenOf(last: RunEvent | undefined, units: UnitSystem): string {
-  if (last === undefined) return '';
-  return last.kind === 'phase' ? `Phase: ${last.phase ?? ''}` : (eventWords(last, units) ?? '');
 }
 
 /** Why the run is over, as a sentence; empty while it goes on. */

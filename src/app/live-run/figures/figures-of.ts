@@ -12,8 +12,7 @@ import {
   type TraceRows,
 } from '#sim-core/index';
 import {formatted, type Quantity, type UnitSystem} from '#shared/units';
-
-const SAMPLE_S = 0.01;
+import {SAMPLE_S} from '../sample-period';
 
 /** One figure as it is shown. */
 export interface Figure {

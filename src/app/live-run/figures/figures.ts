@@ -2,6 +2,7 @@ import {ChangeDetectionStrategy, Component, computed, input} from '@angular/core
 import {type UnitSystem} from '#shared/units';
 import {entryWords} from '#shared/wording/run';
 import {type LiveRun} from '../live-run';
+import {SAMPLE_S} from '../sample-period';
 import {figuresOf, lastAct, type Yardstick} from './figures-of';
 
 /** The numbers beside a trend, since the last act. */
@@ -77,6 +78,6 @@ export class Figures {
   protected readonly title = computed(() => {
     const since = this.since();
     if (since === null) return 'Figures since the beginning';
-    return `Figures since “${entryWords(since, this.units()) ?? ''}” at ${(since.tick * 0.01).toFixed(1)} s`;
+    return `Figures since “${entryWords(since, this.units()) ?? ''}” at ${(since.tick * SAMPLE_S).toFixed(1)} s`;
   });
 }

@@ -22,7 +22,8 @@ import {onThemeChange, type Palette, readPalette} from './palette';
 import {readingsAt} from './readings';
 import {marksOf, type PlaceNumber} from './trend-marks';
 import {TrendPlots} from './trend-plots';
-import {phaseSpans, SAMPLE_S, type TrendScene} from './trend-scene';
+import {SAMPLE_S} from '../sample-period';
+import {phaseSpans, type TrendScene} from './trend-scene';
 
 /** Below this width [px] traces have no names beside them: the readings name them. */
 const NAMES_FROM_PX = 620;

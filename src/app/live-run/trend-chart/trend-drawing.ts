@@ -2,7 +2,8 @@ import {phaseWord} from '#shared/wording/run';
 import type uPlot from 'uplot';
 import {type Palette} from './palette';
 import {type Mark, type PlaceNumber} from './trend-marks';
-import {type PhaseSpan, SAMPLE_S} from './trend-scene';
+import {SAMPLE_S} from '../sample-period';
+import {type PhaseSpan} from './trend-scene';
 
 /** Height of the strip of phases above the tension [px]. */
 export const STRIP_PX = 18;

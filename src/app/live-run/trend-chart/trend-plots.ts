@@ -13,7 +13,8 @@ import {
   STRIP_PX,
   type TraceName,
 } from './trend-drawing';
-import {SAMPLE_S, type TrendScene} from './trend-scene';
+import {SAMPLE_S} from '../sample-period';
+import {type TrendScene} from './trend-scene';
 
 /** More points than this are more than pixels. */
 const MOST_POINTS = 4100;

@@ -3,9 +3,6 @@ import {type UnitSystem} from '#shared/units';
 import {type TraceStore} from '../trace/trace-store';
 import {type Mark, type PlaceNumber} from './trend-marks';
 
-/** Control period [s]: row r of a trace is at r × this. */
-export const SAMPLE_S = 0.01;
-
 /** A stretch of ticks in one phase; the last one has no end yet. */
 export interface PhaseSpan {
   readonly phase: Phase;
