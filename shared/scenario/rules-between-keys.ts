@@ -39,7 +39,8 @@ function plantRules(scenario: Scenario, plantStepS: number): BrokenRule[] {
   if (roll.radiusM < roll.coreRadiusM) refuse('roll.radiusM', 'Must not be below the core’s.');
   if ((brake.residualTorqueNm ?? 0) >= brake.maxTorqueNm)
     refuse('brake.residualTorqueNm', 'Must be below maxTorqueNm.');
-  if (isShort(brake.lagS, plantStepS)) refuse('brake.lagS', TOO_SHORT);
+  for (const key of ['lagS', 'lagUpS', 'lagDownS'] as const)
+    if (isShort(brake[key] ?? 0, plantStepS)) refuse(`brake.${key}`, TOO_SHORT);
   if (sensing.kind === 'loadCell' && isShort(sensing.filterS, plantStepS))
     refuse('sensing.filterS', TOO_SHORT);
   return broken;

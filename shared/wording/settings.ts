@@ -58,6 +58,8 @@ const OTHER_NAMES: Readonly<Record<string, string>> = {
   antiWindup: 'At a limit',
   trackingS: 'Tracking time',
   bumpless: 'Change over without a jump',
+  outRatePctPerS: 'Output rate, per second',
+  outStepPct: 'Output resolution',
 };
 
 /** Quantities of those among them that are numbers. */
@@ -71,6 +73,8 @@ const PLAIN_NUMBERS: Readonly<
   fastStopHoldS: {quantity: 'time'},
   caliperEnteredM: {quantity: 'thickness'},
   trackingS: {quantity: 'time'},
+  outRatePctPerS: {quantity: 'percent', canBeOff: true},
+  outStepPct: {quantity: 'percent', canBeOff: true},
 };
 
 /** Values that are words or signs, by key and value. */

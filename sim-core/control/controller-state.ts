@@ -1,6 +1,6 @@
 /** Places in the controller's part of the state. */
 export const PHASE = 0; // number of the phase, in the order of PHASES
-export const OUTPUT = 1; // output in force [%]
+export const OUTPUT = 1; // output in force, before its resolution [%]
 export const INPUT = 2; // filtered input y_f [N]
 export const HAS_INPUT = 3;
 export const INTEGRAL = 4; // [%]
@@ -16,4 +16,5 @@ export const STOP_AT = 13; // tick of the first stop command
 export const STOP_IS_FAST = 14;
 export const STOP_OUTPUT = 15; // output at that command [%]
 export const LIMIT = 16; // −1, 1: the PID's output is at its lower, upper limit; else 0
-export const CONTROLLER_SIZE = 17;
+export const APPLIED = 17; // output in force as the brake gets it [%]
+export const CONTROLLER_SIZE = 18;

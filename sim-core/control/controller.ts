@@ -48,6 +48,7 @@ export class Controller {
     const {state} = this;
     state.fill(0);
     state[at.OUTPUT] = settings.standstillPct;
+    state[at.APPLIED] = settings.standstillPct;
     state[at.SET_POINT] = settings.setPointN;
     const entered = settings.radiusSource === 'true' ? null : settings.radiusEnteredM;
     state[at.RADIUS] = entered ?? radiusM;
@@ -81,6 +82,7 @@ export class Controller {
       state[at.CLOSED] = 0;
       state[at.LIMIT] = 0;
     }
+    state[at.APPLIED] = set.applied(tuning, state[at.OUTPUT]);
   }
 
   private readInput(): void {

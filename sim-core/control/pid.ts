@@ -31,7 +31,7 @@ export function pidOutput(state: Float64Array, tuning: Float64Array, news: Float
 
   const derivative = gain * tdS * state[at.DERIVATIVE];
   const wanted = compensation * (proportional + state[at.INTEGRAL]! - derivative) + assist;
-  const output = set.clampOutput(tuning, wanted);
+  const output = slowed(set.clampOutput(tuning, wanted), state[at.OUTPUT]!, tuning);
   const limit = wanted >= tuning[set.OUT_MAX]! ? 1 : wanted <= tuning[set.OUT_MIN]! ? -1 : 0;
   state[at.LIMIT] = limit;
 
@@ -42,7 +42,21 @@ export function pidOutput(state: Float64Array, tuning: Float64Array, news: Float
     const windup = tuning[set.WINDUP];
     if (windup === set.BACK_CALCULATION)
       state[at.INTEGRAL]! += step + (sampleS / tuning[set.TRACKING_S]!) * (output - wanted);
-    else if (windup === set.NO_ANTI_WINDUP || !(limit * error > 0)) state[at.INTEGRAL]! += step;
+    else if (windup === set.NO_ANTI_WINDUP || !pushes(limit, wanted - output, error))
+      state[at.INTEGRAL]! += step;
   }
   return output;
+}
+
+/** An output that moves no faster than its rate from the one before. */
+function slowed(output: number, before: number, tuning: Float64Array): number {
+  const rate = tuning[set.OUT_RATE]!;
+  if (rate === 0) return output;
+  const most = rate * tuning[set.SAMPLE_S]!;
+  return Math.min(Math.max(output, before - most), before + most);
+}
+
+/** Whether the error drives an output further out that is held by a limit or, `beyond` it, by its rate. */
+function pushes(limit: number, beyond: number, error: number): boolean {
+  return limit === 0 ? beyond * error > 0 : limit * error > 0;
 }

@@ -36,7 +36,9 @@ export const INPUT_FILTER_S = 28;
 export const WINDUP = 29;
 export const TRACKING_S = 30;
 export const IS_BUMPLESS = 31;
-export const TUNING_SIZE = 32;
+export const OUT_RATE = 32; // [%/s], 0: none
+export const OUT_STEP = 33; // [%], 0: none
+export const TUNING_SIZE = 34;
 
 /** Sources of the radius. */
 export const TRUE_RADIUS = 0;
@@ -89,11 +91,19 @@ export function tune(tuning: Float64Array, settings: Settings): void {
   tuning[WINDUP] = WINDUPS[settings.antiWindup];
   tuning[TRACKING_S] = settings.trackingS ?? NaN;
   tuning[IS_BUMPLESS] = settings.bumpless ? 1 : 0;
+  tuning[OUT_RATE] = settings.outRatePctPerS;
+  tuning[OUT_STEP] = settings.outStepPct;
 }
 
 /** Whether a start begins with an output of its own. */
 export function hasStartOutput(tuning: Float64Array): boolean {
   return tuning[START_PCT]! >= 0;
+}
+
+/** What the brake gets of an output [%]: the nearest multiple of the resolution. */
+export function applied(tuning: Float64Array, output: number): number {
+  const step = tuning[OUT_STEP]!;
+  return step > 0 ? step * Math.floor(output / step + 0.5) : output;
 }
 
 /** Within the output limits in force. */

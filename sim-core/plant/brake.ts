@@ -24,6 +24,11 @@ export function fixBrake(n: Float64Array, brake: BrakeParams): void {
   n[now.AMBIENT] = brake.ambientC ?? 25;
 }
 
+/** Lags of the drive while it rises and while it falls [s]. */
+export function lagsOf({lagS, lagUpS, lagDownS}: BrakeParams): readonly [number, number] {
+  return [lagUpS ?? lagS, lagDownS ?? lagS];
+}
+
 /** Share of its torque that a brake at this temperature [°C] keeps. */
 export function fade(n: Float64Array, brakeC: number): number {
   const above = brakeC - n[now.FADE_START]!;

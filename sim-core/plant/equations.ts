@@ -28,6 +28,7 @@ export class Equations {
   readonly hasDancer: boolean;
   readonly hasFilter: boolean;
   readonly hasRunout: boolean;
+  readonly relaxes: boolean;
   private readonly hasFixedPath: boolean;
   private readonly hasGrip: boolean;
 
@@ -52,6 +53,9 @@ export class Equations {
     this.curve = new Points(brake.curve ?? STRAIGHT);
     this.hasDancer = sensing.kind === 'dancer';
     this.hasFilter = n[now.PER_FILTER]! > 0;
+    n[now.MAXWELL_N] = (web.maxwellModulusPa ?? 0) * n[now.AREA];
+    n[now.PER_MAXWELL] = 1 / (web.maxwellTimeS ?? 100);
+    this.relaxes = n[now.MAXWELL_N] > 0;
     this.hasRunout = n[now.RUNOUT] > 0;
     this.hasFixedPath = !this.hasDancer && !this.hasRunout;
     this.hasGrip = n[now.EXTRA_GRIP]! > 0;
@@ -142,6 +146,7 @@ export class Equations {
       lengthSlope = paidOut - v * length * (this.hasFixedPath ? n[now.PER_SPAN]! : 1 / path);
       const strainSlope = (pathSlope - stretch * lengthSlope) * perLength;
       raw = n[now.STIFFNESS]! * (stretch - 1 + n[now.LOSS_S]! * strainSlope);
+      if (this.relaxes) raw += n[now.MAXWELL_N]! * (stretch - 1 - y[at.RELAXED]!);
       if (raw > 0) tension = raw;
       rollN = tension - n[now.IDLER_KG]! * (n[now.C1]! + 2 * since * n[now.C2]!);
       if (v >= DRAG_FULL_MPS) rollN -= n[now.IDLER_N]!;
@@ -169,6 +174,8 @@ export class Equations {
     slope[at.HEAT] =
       n[now.PER_CAPACITY]! *
       (torque * Math.abs(omega) - n[now.CONDUCTANCE]! * (heat - n[now.AMBIENT]!));
+    if (this.relaxes)
+      slope[at.RELAXED] = this.relaxing(y[at.RELAXED]!, stretch, paidOut * perLength);
     if (this.hasFilter)
       slope[at.FILTER] = n[now.PER_FILTER]! * (this.signal(tension) - y[at.FILTER]!);
     else if (this.hasDancer) this.dancerSlopes(y, slope, tension);
@@ -191,6 +198,16 @@ export class Equations {
     slope[at.DANCER] = isFree ? speed : 0;
     slope[at.DANCER_SPEED] = isFree ? n[now.PER_MASS]! * (force - n[now.DAMPING]! * speed) : 0;
     n[now.DANCER_PULL] = force;
+  }
+
+  /**
+   * Slope of the dashpot's strain: toward the web's in the branch's own time, and toward the strain in the roll's
+   * outer lap as web of that strain comes in, `perS` spans a second.
+   */
+  private relaxing(strain: number, stretch: number, perS: number): number {
+    const {now: n} = this;
+    const ofWeb = stretch > 1 ? stretch - 1 : 0;
+    return n[now.PER_MAXWELL]! * (ofWeb - strain) - perS * (strain - (1 / n[now.PER_WOUND]! - 1));
   }
 
   private settleDancer(y: Float64Array): void {

@@ -66,4 +66,6 @@ export const NOISE = 51; // [N]
 export const TRAVEL = 52; // of the dancer [m]
 export const PER_MASS = 53; // [1/kg]
 export const DAMPING = 54; // [N·s/m]
-export const EVALUATION_SIZE = 55;
+export const MAXWELL_N = 55; // modulus of the Maxwell branch × cross section [N]
+export const PER_MAXWELL = 56; // [1/s]
+export const EVALUATION_SIZE = 57;

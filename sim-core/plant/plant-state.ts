@@ -1,4 +1,4 @@
-/** Places in the plant's part of the state. The first nine are integrated. */
+/** Places in the plant's part of the state. The first ten are integrated. */
 export const OMEGA = 0; // roll speed [rad/s]
 export const THETA = 1; // roll angle [rad], 0 … 2π at each tick
 export const WOUND = 2; // relaxed length on the roll [m]
@@ -8,19 +8,20 @@ export const FILTER = 5; // sensor's filter [N]
 export const DANCER = 6; // dancer position [m]
 export const DANCER_SPEED = 7; // [m/s]
 export const ROLLER = 8; // angle of the roller with run-out [rad]
-export const INTEGRATED = 9;
+export const RELAXED = 9; // strain of the dashpot in the web's Maxwell branch
+export const INTEGRATED = 10;
 
-export const DRIVE = 9; // brake drive x [%]
-export const TENSION = 10; // at the end of the last tick [N]
-export const STRAIN = 11; // at the end of the last tick
-export const MODULUS = 12; // [Pa]
-export const ECCENTRICITY = 13; // [m]
-export const OVAL = 14; // [m]
-export const ZERO = 15; // [N]
-export const SPAN_PCT = 16; // [%]
-export const LOAD = 17; // known load on the roller [N]
-export const LOADED = 18; // 1 while it hangs
-export const RIPPLE = 19; // [m/s]
-export const RIPPLE_HZ = 20; // [Hz]
-export const LARGEST = 21; // largest radius so far [m]
-export const PLANT_SIZE = 22;
+export const DRIVE = 10; // brake drive x [%]
+export const TENSION = 11; // at the end of the last tick [N]
+export const STRAIN = 12; // at the end of the last tick
+export const MODULUS = 13; // [Pa]
+export const ECCENTRICITY = 14; // [m]
+export const OVAL = 15; // [m]
+export const ZERO = 16; // [N]
+export const SPAN_PCT = 17; // [%]
+export const LOAD = 18; // known load on the roller [N]
+export const LOADED = 19; // 1 while it hangs
+export const RIPPLE = 20; // [m/s]
+export const RIPPLE_HZ = 21; // [Hz]
+export const LARGEST = 22; // largest radius so far [m]
+export const PLANT_SIZE = 23;

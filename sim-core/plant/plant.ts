@@ -1,5 +1,6 @@
 import {type Disturbance, type Scenario} from '../scenario/scenario';
 import {decay} from '../signal/decay';
+import {lagsOf} from './brake';
 import {Drive} from './drive';
 import {Equations} from './equations';
 import * as now from './evaluation';
@@ -32,7 +33,7 @@ const WANTED = 2; // delayed command of the drive [%]
 const PREPARED = 3; // step for which the two factors below hold [s]
 const HALF_DECAY = 4;
 const FULL_DECAY = 5;
-const LAG = 6; // of the drive [s]
+const LAG = 6; // of the drive toward the present command [s]
 
 /**
  * The plant over one control tick: fourth-order Runge–Kutta steps, cut where the
@@ -50,6 +51,8 @@ export class Plant {
   private readonly y: Float64Array;
   private readonly hasCell: boolean;
   private readonly hasFilter: boolean;
+  private readonly lagUpS: number;
+  private readonly lagDownS: number;
   private readonly times = new Float64Array(7);
   private readonly k1 = new Float64Array(at.INTEGRATED);
   private readonly k2 = new Float64Array(at.INTEGRATED);
@@ -83,10 +86,10 @@ export class Plant {
     this.stand = new Stand(scenario, state, this.equations, grid);
     this.drive = new Drive(driveState, brake, plantStepS, stepsPerTick);
     this.y = state.subarray(0, at.INTEGRATED);
-    this.times[LAG] = brake.lagS;
+    [this.lagUpS, this.lagDownS] = lagsOf(brake);
     this.hasCell = sensing.kind === 'loadCell';
     this.hasFilter = this.equations.hasFilter;
-    const isShort = this.hasCell && !this.equations.hasRunout;
+    const isShort = this.hasCell && !this.equations.hasRunout && !this.equations.relaxes;
     this.count = isShort ? at.DANCER : at.INTEGRATED;
   }
 
@@ -167,9 +170,12 @@ export class Plant {
   }
 
   private setCommand(wantedPct: number): void {
-    const {times} = this;
+    const {times, state} = this;
+    const lagS = wantedPct > state[at.DRIVE]! ? this.lagUpS : this.lagDownS;
     times[WANTED] = wantedPct;
-    if (times[LAG]! === 0) this.state[at.DRIVE] = wantedPct;
+    if (lagS !== times[LAG]!) times[PREPARED] = 0;
+    times[LAG] = lagS;
+    if (lagS === 0) state[at.DRIVE] = wantedPct;
   }
 
   /** Evaluates where the state stands and in which mode. */

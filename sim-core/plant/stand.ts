@@ -1,6 +1,6 @@
 import {type Disturbance, type LoadCellParams, type Scenario} from '../scenario/scenario';
 import {cosine, TWO_PI} from '../signal/sine';
-import {fade, grip} from './brake';
+import {fade, grip, lagsOf} from './brake';
 import {type Equations} from './equations';
 import * as now from './evaluation';
 import * as at from './plant-state';
@@ -64,13 +64,13 @@ export class Stand {
   refresh(): void {
     const {state} = this;
     this.equations.refresh();
-    const {brake, sensing} = this.scenario;
+    const {sensing} = this.scenario;
     const pace = paceOf(this.scenario, state[at.MODULUS]!, state[at.LARGEST]!);
     const filterS = sensing.kind === 'loadCell' ? sensing.filterS : 0;
     this.stepsPerS[0] = Math.max(
       pace.rate,
       pace.vibration / FINE,
-      brake.lagS > 0 ? 1 / (LAG_SHARE * brake.lagS) : 0,
+      ...lagsOf(this.scenario.brake).map((lagS) => (lagS > 0 ? 1 / (LAG_SHARE * lagS) : 0)),
       filterS > 0 ? 1 / (LAG_SHARE * filterS) : 0,
     );
   }
@@ -151,6 +151,7 @@ export class Stand {
   private layAt(tensionN: number): void {
     const strain = tensionN / this.equations.now[now.STIFFNESS]!;
     this.state[at.LENGTH] = this.pathLength() / (1 + strain);
+    this.state[at.RELAXED] = strain; // it has lain long enough
   }
 
   /** A flying change keeps the surface speed; one at rest lays the web at its initial tension. */

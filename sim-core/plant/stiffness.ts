@@ -17,7 +17,9 @@ export interface Pace {
 /** Roll and dancer hang on the same web, so their stiffness per mass simply adds up. */
 export function paceOf(scenario: Scenario, modulusPa: number, largestRadiusM: number): Pace {
   const {web, roll, span, brake, sensing} = scenario;
-  const stiffness = (modulusPa * web.widthM * web.thicknessM) / span.lengthM; // [N/m]
+  const area = web.widthM * web.thicknessM;
+  const elastic = (modulusPa * area) / span.lengthM; // [N/m]
+  const stiffness = elastic + ((web.maxwellModulusPa ?? 0) * area) / span.lengthM; // [N/m]
   const leastInertia = roll.coreInertiaKgM2;
   const perMass =
     quickestRadius(scenario, largestRadiusM) + (sensing.kind === 'dancer' ? 4 / sensing.massKg : 0); // [1/kg]
@@ -26,7 +28,7 @@ export function paceOf(scenario: Scenario, modulusPa: number, largestRadiusM: nu
     (brake.maxTorqueNm * ((brake.breakaway ?? 1) - 1) * STEEPEST_GRIP) /
     ((brake.breakawayRadps ?? 0.5) * leastInertia);
   const damping =
-    stiffness * (web.lossTimeS ?? 0) * perMass +
+    elastic * (web.lossTimeS ?? 0) * perMass +
     (sensing.kind === 'dancer' ? sensing.dampingNsPerM / sensing.massKg : 0) +
     (roll.viscousNmS ?? 0) / leastInertia +
     grip; // [1/s]

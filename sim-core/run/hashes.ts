@@ -3,16 +3,16 @@ export const BYTES: {
   readonly engine: number;
   readonly hashes: Readonly<Record<string, string>>;
 } = {
-  engine: 1,
+  engine: 2,
   hashes: {
-    a: '7895a02aaaeab90a',
-    b: '1271835636d25cef',
-    c: 'f965fd3099177ee2',
-    d: '88c4b13e301315d2',
-    e: '27e9ba7b9eb56f65',
-    f: 'a758ecf9a8a4d6b6',
-    g: '93db76bc038d77ba',
-    noise: 'c33a12baf5d22e53',
-    live: 'a8ff85e579790362',
+    a: '0fee82e1debbcf8b',
+    b: '622b375035f84740',
+    c: 'c2384706563e1347',
+    d: 'aa6b9616ed772a21',
+    e: '0c51a50c1e1b1f88',
+    f: '693e1f7a6ce61254',
+    g: '81be5bbeaa0f2394',
+    noise: '906cb1ab0aeaa4b5',
+    live: 'd734b9363620e5b9',
   },
 };

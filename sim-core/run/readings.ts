@@ -27,7 +27,7 @@ export function viewOf(
     sampleN,
     measuredN: p[place.FILTER]!,
     setPointN: c[control.SET_POINT]!,
-    outputPct: c[control.OUTPUT]!,
+    outputPct: c[control.APPLIED]!,
     lineMps: plant.line.speedAt(tS),
     lineTargetMps: plant.line.targetMps,
     rollRadps: p[place.OMEGA]!,
@@ -49,7 +49,7 @@ export function writePlant(block: TraceBlock, parts: Parts, t: number): void {
   const {rows} = block;
   rows[row + COLUMN.tensionN] = p[place.TENSION]!;
   rows[row + COLUMN.measuredN] = p[place.FILTER]!;
-  rows[row + COLUMN.outputPct] = c[control.OUTPUT]!;
+  rows[row + COLUMN.outputPct] = c[control.APPLIED]!;
   rows[row + COLUMN.lineMps] = plant.line.speedAt(t);
   rows[row + COLUMN.rollRadps] = p[place.OMEGA]!;
   rows[row + COLUMN.radiusM] = plant.stand.radius();

@@ -203,7 +203,7 @@ export class Simulation implements Run {
     this.watch.phase(tick, controlState[control.PHASE]!);
     if (block !== undefined) writeControl(block, this.parts);
 
-    plant.move(tick, controlState[control.OUTPUT]!, controlState[control.SET_POINT]!);
+    plant.move(tick, controlState[control.APPLIED]!, controlState[control.SET_POINT]!);
     this.lookAround(tick);
     state[TICK] = tick + 1;
   }

@@ -34,7 +34,9 @@ export function plantFaults(scenario: Scenario, sampleS: number, plantStepS: num
     refuse('roll.radiusM', roll.radiusM, `roll.coreRadiusM (${roll.coreRadiusM} m) or more`);
   if ((brake.residualTorqueNm ?? 0) >= brake.maxTorqueNm)
     refuse('brake.residualTorqueNm', brake.residualTorqueNm, 'less than brake.maxTorqueNm');
-  if (isShort(brake.lagS, plantStepS)) refuse('brake.lagS', brake.lagS, noShorter(plantStepS));
+  for (const key of ['lagS', 'lagUpS', 'lagDownS'] as const)
+    if (isShort(brake[key] ?? 0, plantStepS))
+      refuse(`brake.${key}`, brake[key], noShorter(plantStepS));
   if (sensing.kind === 'loadCell' && isShort(sensing.filterS, plantStepS))
     refuse('sensing.filterS', sensing.filterS, noShorter(plantStepS));
   const source = controller.radiusSource ?? 'true';

@@ -133,6 +133,8 @@ export const FIELDS: readonly Field[] = [
   need('web.breakNPerM', 'N/m', 1, 1e7),
   may('web.lossTimeS', 's', 0, 1, 0),
   may('web.stretchLimitPct', '%', 0.001, 1000, null),
+  may('web.maxwellModulusPa', 'Pa', 0, 1e12, 0),
+  may('web.maxwellTimeS', 's', 0.1, DAY_S, 100),
 
   need('roll.coreRadiusM', 'm', 0.005, 2),
   need('roll.radiusM', 'm', 0.005, 5),
@@ -152,6 +154,8 @@ export const FIELDS: readonly Field[] = [
   need('brake.maxTorqueNm', 'N·m', 0.001, 1e6),
   may('brake.residualTorqueNm', 'N·m', 0, 1e6, 0),
   need('brake.lagS', 's', 0, 60),
+  may('brake.lagUpS', 's', 0, 60, null),
+  may('brake.lagDownS', 's', 0, 60, null),
   may('brake.deadTimeS', 's', 0, 10, 0),
   may('brake.playPct', '%', 0, 50, 0),
   may('brake.stickPct', '%', 0, 50, 0),
@@ -240,6 +244,8 @@ export const FIELDS: readonly Field[] = [
   choice('controller.antiWindup', ['conditional', 'backCalculation', 'none'], 'conditional', LIVE),
   may('controller.trackingS', 's', 0.001, 10_000, null, LIVE_OFF),
   yesNo('controller.bumpless', true, LIVE),
+  may('controller.outRatePctPerS', '%/s', 0, 100_000, 0, LIVE),
+  may('controller.outStepPct', '%', 0, 20, 0, LIVE),
 ];
 
 /** Keys of one line command. */

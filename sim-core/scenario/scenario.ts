@@ -17,6 +17,10 @@ export interface WebParams {
   readonly lossTimeS?: number;
   /** Strain above which the web stays stretched [%]; none when left out. */
   readonly stretchLimitPct?: number;
+  /** Modulus of a Maxwell branch beside the elastic web [Pa], >= 0; 0: the web does not relax. */
+  readonly maxwellModulusPa?: number;
+  /** Relaxation time of that branch [s], > 0. */
+  readonly maxwellTimeS?: number;
 }
 
 /** Unwinding roll and its shaft. */
@@ -61,6 +65,10 @@ export interface BrakeParams {
   readonly residualTorqueNm?: number;
   /** First-order lag of the drive [s], 0 or at least two plant steps. */
   readonly lagS: number;
+  /** Lag while the drive rises [s], as lagS when left out. */
+  readonly lagUpS?: number;
+  /** Lag while the drive falls [s], as lagS when left out. */
+  readonly lagDownS?: number;
   /** Dead time of the drive [s], >= 0. */
   readonly deadTimeS?: number;
   /** Play between output and drive [%], >= 0. */
@@ -181,6 +189,10 @@ export interface LiveSettings {
   readonly antiWindup?: 'conditional' | 'backCalculation' | 'none';
   readonly trackingS?: number | null;
   readonly bumpless?: boolean;
+  /** Greatest rate of the PID's output [% per s], 0 = none. */
+  readonly outRatePctPerS?: number;
+  /** Resolution of the output [%]: the brake gets whole multiples of it; 0 = none. */
+  readonly outStepPct?: number;
 }
 
 /** Command to the line's drive. `speedMps` [m/s] only with `run`; `rampS` [s]. */

@@ -42,6 +42,8 @@ export interface Settings {
   readonly antiWindup: 'conditional' | 'backCalculation' | 'none';
   readonly trackingS: number | null;
   readonly bumpless: boolean;
+  readonly outRatePctPerS: number;
+  readonly outStepPct: number;
 }
 
 const DEFAULTS: ReadonlyMap<string, unknown> = new Map(
