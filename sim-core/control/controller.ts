@@ -25,7 +25,7 @@ export interface InertiaLaw {
 export class Controller {
   /** What it sees; the caller fills it in before each tick. */
   readonly news = new Float64Array(seen.SEEN_SIZE);
-  private readonly tuning = new Float64Array(set.TUNING_SIZE);
+  readonly tuning = new Float64Array(set.TUNING_SIZE);
   private readonly fixed = new Float64Array(4);
   private readonly isDancer: boolean;
   private gains: Points | null = null;
@@ -64,6 +64,23 @@ export class Controller {
   /** A radius entered by somebody: the one way to set what the controller believes. */
   enterRadius(radiusM: number): void {
     this.state[at.RADIUS] = radiusM;
+  }
+
+  /** Whether nothing is asked for but a PID with one gain, or one that goes with the true radius. */
+  isPlain(): boolean {
+    const {tuning, gains} = this;
+    return (
+      gains === null &&
+      tuning[set.SOURCE] === set.TRUE_RADIUS &&
+      tuning[set.IS_MANUAL] === 0 &&
+      tuning[set.OUT_RATE] === 0 &&
+      tuning[set.OUT_STEP] === 0
+    );
+  }
+
+  /** The limit [%] at which the output is, when it is at one. */
+  limitPct(): number {
+    return this.state[at.LIMIT]! > 0 ? this.tuning[set.OUT_MAX]! : this.tuning[set.OUT_MIN]!;
   }
 
   /** One control tick; the output lies in the state. */

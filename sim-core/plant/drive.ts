@@ -64,7 +64,7 @@ export class Drive {
     state[W] = w;
     if (state[STARTED] === 0 || Math.abs(w - state[STUCK]!) > state[STICK]!) state[STUCK] = w;
     state[STARTED] = 1;
-    state[QUEUE + (tick % this.length)] = state[SUPPLY]! * state[STUCK]!;
+    state[QUEUE + this.slot(tick)] = state[SUPPLY]! * state[STUCK]!;
   }
 
   /** Delayed command [%] in the early part of the tick, before plant step `changesAtStep`. */
@@ -78,7 +78,12 @@ export class Drive {
   }
 
   private at(tick: number): number {
-    return this.state[QUEUE + ((tick + 2 * this.length) % this.length)]!;
+    return this.state[QUEUE + this.slot(tick + 2 * this.length)]!;
+  }
+
+  /** Place of a tick in the queue; the remainder of whole numbers, as that of others is far slower. */
+  private slot(tick: number): number {
+    return (tick | 0) % this.length;
   }
 }
 

@@ -45,6 +45,23 @@ export class Line {
     return this.state[TARGET]!;
   }
 
+  /** Speed at which the line ends up once what was commanded is over [m/s]. */
+  get lastMps(): number {
+    return this.state[SEGMENTS + 3 * (this.state[COUNT]! - 1) + 1]!;
+  }
+
+  /** Whether the rounded speed stays at `lastMps` from `t` [s] on, until the next command. */
+  isSteady(t: number): boolean {
+    const {state} = this;
+    const last = SEGMENTS + 3 * (state[COUNT]! - 1);
+    return state[last + 2] === 0 && state[last]! <= t - state[ROUND_S]! + GRACE_S;
+  }
+
+  /** Whether the line is at zero all through the open tick. */
+  isAtRest(): boolean {
+    return this.pieces === 1 && this.c0[0] === 0 && this.c1[0] === 0 && this.c2[0] === 0;
+  }
+
   /** Takes a command at time `t` [s], a tick. */
   command(t: number, line: LineCommand): void {
     const {state} = this;

@@ -1,6 +1,6 @@
 import {type Disturbance, type Scenario} from '../scenario/scenario';
 import {decay} from '../signal/decay';
-import {lagsOf} from './brake';
+import {fade, grip, lagsOf} from './brake';
 import {Drive} from './drive';
 import {Equations} from './equations';
 import * as now from './evaluation';
@@ -44,13 +44,17 @@ export class Plant {
   readonly line: Line;
   readonly stand: Stand;
   readonly equations: Equations;
+  readonly drive: Drive;
   /** How the run ended, once it has. */
   end: PlantEnd | null = null;
 
-  private readonly drive: Drive;
   private readonly y: Float64Array;
   private readonly hasCell: boolean;
   private readonly hasFilter: boolean;
+  private readonly canRest: boolean;
+  /** Share that a tick at rest leaves of the brake's excess temperature, and of what the filter still lacks. */
+  private readonly coolsTo: number;
+  private readonly filterKeeps: number;
   private readonly lagUpS: number;
   private readonly lagDownS: number;
   private readonly times = new Float64Array(7);
@@ -61,8 +65,8 @@ export class Plant {
   private readonly trial = new Float64Array(at.INTEGRATED);
   /** State and slope at the start of a step, one pair for each depth of halving. */
   private readonly before = Array.from({length: DEEPEST + 1}, twoStates);
-  /** States integrated: all of them only with a dancer or a roller with run-out. */
-  private readonly count: number;
+  /** States looked after: all of them only with a dancer, a roller with run-out or a relaxing web. */
+  readonly count: number;
   private region = 0;
   private piece = 0;
 
@@ -89,6 +93,10 @@ export class Plant {
     [this.lagUpS, this.lagDownS] = lagsOf(brake);
     this.hasCell = sensing.kind === 'loadCell';
     this.hasFilter = this.equations.hasFilter;
+    this.canRest = this.hasCell && !this.equations.hasRunout && !this.equations.relaxes;
+    this.coolsTo = decay((grid.sampleS * brake.conductanceWPerK) / brake.capacityJPerK);
+    const filterS = sensing.kind === 'loadCell' ? sensing.filterS : 0;
+    this.filterKeeps = filterS > 0 ? decay(grid.sampleS / filterS) : 0;
     const isShort = this.hasCell && !this.equations.hasRunout && !this.equations.relaxes;
     this.count = isShort ? at.DANCER : at.INTEGRATED;
   }
@@ -134,6 +142,7 @@ export class Plant {
     times[FROM] = 0;
     this.look();
     if (this.ended()) return;
+    if (this.rest(changesAtS, late)) return;
 
     const steps = this.stand.stepsInTick();
     for (let step = 1; step <= steps; step++) {
@@ -147,6 +156,42 @@ export class Plant {
       if (to > times[FROM] + SAME_S && !this.moveTo(to)) return;
     }
     this.close();
+  }
+
+  /**
+   * A tick of a roll held under a standing line, in closed form: tension and lengths stay, drive, heat and filter
+   * each follow their own exponential. False when the brake might let go or its curve bends: then nothing is done.
+   */
+  private rest(changesAtS: number, late: number): boolean {
+    const {equations, y, state, times, grid} = this;
+    const {now: n, curve} = equations;
+    if (!this.canRest || n[now.SLIDING] !== 0 || !this.line.isAtRest()) return false;
+    const from = state[at.DRIVE]!;
+    const early = changesAtS > 0 ? this.approach(from, times[WANTED]!, changesAtS) : from;
+    const to = this.approach(early, late, grid.sampleS - changesAtS);
+    const piece = curve.piece(from);
+    if (curve.piece(early) !== piece || curve.piece(to) !== piece) return false;
+
+    const cooled = n[now.AMBIENT]! + (y[at.HEAT]! - n[now.AMBIENT]!) * this.coolsTo;
+    const least = Math.min(curve.on(piece, from), curve.on(piece, early), curve.on(piece, to));
+    const torque = n[now.RESIDUAL]! + n[now.TORQUE_SPAN]! * least;
+    const kept = Math.min(fade(n, y[at.HEAT]!), fade(n, cooled));
+    const holds = torque * kept * grip(n, 0) + n[now.COULOMB]!;
+    if (!(Math.abs(n[now.PULL]!) <= holds)) return false;
+
+    const signal = equations.signal(n[now.TENSION_NOW]!);
+    y[at.FILTER] = signal + (y[at.FILTER]! - signal) * this.filterKeeps;
+    y[at.HEAT] = cooled;
+    y[at.DRIVE] = to;
+    this.close();
+    return true;
+  }
+
+  /** Where the drive [%] is after `forS` [s] of one command. */
+  private approach(from: number, wanted: number, forS: number): number {
+    if (from === wanted) return from;
+    const lagS = wanted > from ? this.lagUpS : this.lagDownS;
+    return lagS > 0 ? wanted + (from - wanted) * decay(forS / lagS) : wanted;
   }
 
   /** Moves on to a time within the tick, cutting where the line's speed bends. False when the run ended. */
@@ -208,13 +253,12 @@ export class Plant {
 
   /** One step of STEP from FROM, halved while it crosses a bend. False when the run ended in it. */
   private step(depth: number): boolean {
-    const {y, k1, state, count} = this;
+    const {y, k1, count} = this;
     const {state: y0, slope: s0} = this.before[depth]!;
     for (let i = 0; i < count; i++) {
       y0[i] = y[i]!;
       s0[i] = k1[i]!;
     }
-    y0[at.DRIVE] = state[at.DRIVE]!;
     this.rungeKutta();
     const bends = regionOf(this.equations, y) ^ this.region;
     if (bends === 0) return true;
@@ -225,13 +269,12 @@ export class Plant {
 
   /** Takes a step back and does it again in two halves. */
   private halve(depth: number): boolean {
-    const {y, k1, state, count, times} = this;
+    const {y, k1, count, times} = this;
     const {state: y0, slope: s0} = this.before[depth]!;
     for (let i = 0; i < count; i++) {
       y[i] = y0[i]!;
       k1[i] = s0[i]!;
     }
-    state[at.DRIVE] = y0[at.DRIVE]!;
     const from = times[FROM]!;
     const half = times[STEP]! / 2;
     for (let part = 0; part < 2; part++) {
@@ -294,5 +337,5 @@ export class Plant {
 }
 
 function twoStates(): {readonly state: Float64Array; readonly slope: Float64Array} {
-  return {state: new Float64Array(at.INTEGRATED + 1), slope: new Float64Array(at.INTEGRATED)};
+  return {state: new Float64Array(at.INTEGRATED), slope: new Float64Array(at.INTEGRATED)};
 }

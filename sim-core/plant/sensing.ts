@@ -2,8 +2,8 @@ import {type Scenario} from '../scenario/scenario';
 import * as now from './evaluation';
 
 /** Readings a load cell's amplifier can give, as shares of its range. */
-const LEAST_SHARE = -0.1;
-const GREATEST_SHARE = 1.2;
+export const LEAST_SHARE = -0.1;
+export const GREATEST_SHARE = 1.2;
 
 /** Fills in what of the sensing never changes. */
 export function fixSensing(n: Float64Array, {sensing}: Scenario): void {

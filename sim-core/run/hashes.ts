@@ -5,14 +5,14 @@ export const BYTES: {
 } = {
   engine: 2,
   hashes: {
-    a: '0fee82e1debbcf8b',
-    b: '622b375035f84740',
-    c: 'c2384706563e1347',
-    d: 'aa6b9616ed772a21',
-    e: '0c51a50c1e1b1f88',
-    f: '693e1f7a6ce61254',
-    g: '81be5bbeaa0f2394',
-    noise: '906cb1ab0aeaa4b5',
-    live: 'd734b9363620e5b9',
+    a: '8033ecd5ddaf6c6f',
+    b: '80714126cb3e86fe',
+    c: '541b64b556ff76e8',
+    d: '2d676d38b3e336a1',
+    e: 'b5076689d5d10e0e',
+    f: 'f1516534fb934ff5',
+    g: '582dec44adf3c20b',
+    noise: '2057670192d814dc',
+    live: 'fd53b634774daf29',
   },
 };

@@ -9,7 +9,7 @@ import {cellSample} from '../plant/sensing';
 import {type Fault, ScenarioError} from '../scenario/faults';
 import {type LineCommand, type Scenario} from '../scenario/scenario';
 import {changed, type Settings, settingsOf} from '../scenario/settings';
-import {nextNormal, RANDOM_SIZE, seedWords} from '../signal/random';
+import {nextNormal, seedWords} from '../signal/random';
 import {faultsAhead} from './act-rules';
 import {Fingerprint} from './hash';
 import {type Act, type EngineEntry, type LogEntry, type Note, type RunHash} from './log';
@@ -18,22 +18,9 @@ import {type Outcome, type Run, type RunEvent, type RunView, type SavedRun} from
 import {type Parts, viewOf, writeControl, writePlant} from './readings';
 import {type Change, type Schedule, scheduleOf} from './schedule';
 import {type TraceBlock} from './trace';
-import {Watch, WATCH_SIZE} from './watch';
-
-/** Places at the front of the state, before the parts of controller and plant. */
-const PRINT = 0;
-const TICK = Fingerprint.size;
-const NEXT_LINE = TICK + 1;
-const NEXT_CHANGE = TICK + 2;
-const ENTRIES = TICK + 3; // entries stamped so far
-const SAMPLE = TICK + 4; // last sample [N]
-const RANDOM = TICK + 5;
-const WATCH = RANDOM + RANDOM_SIZE;
-const CONTROLLER = WATCH + WATCH_SIZE;
-const PLANT = CONTROLLER + control.CONTROLLER_SIZE;
-/** From here to here the state goes into the fingerprint; what lies behind are queues of what went before. */
-const PRINTED_FROM = SAMPLE;
-const PRINTED_TO = PLANT + place.PLANT_SIZE;
+import {QuietTicks} from './quiet-ticks';
+import * as slot from './run-state';
+import {Watch} from './watch';
 
 /** What a save holds: only to be given back to the run, or a run of the same document, that made it. */
 interface Saved extends SavedRun {
@@ -63,14 +50,18 @@ export class Simulation implements Run {
   private readonly plant: Plant;
   private readonly controller: Controller;
   private readonly watch: Watch;
+  private readonly quiet: QuietTicks;
   private inForce: Settings;
   private pending: Act[] = [];
   private readonly parts: Parts;
   private readonly news: Float64Array;
   private readonly isDancer: boolean;
 
-  /** `scenario` has been checked. */
-  constructor(private readonly scenario: Scenario) {
+  /** `scenario` has been checked. `isCareful`: no tick takes the hot loop's way, which the specs compare. */
+  constructor(
+    private readonly scenario: Scenario,
+    private readonly isCareful = false,
+  ) {
     const {web, brake, controller} = scenario;
     this.inForce = settingsOf(controller);
     const {sampleS, standstillPct} = this.inForce;
@@ -78,15 +69,15 @@ export class Simulation implements Run {
     this.grid = {sampleS, plantStepS, stepsPerTick: Math.round(sampleS / plantStepS)};
     this.schedule = scheduleOf(scenario, sampleS);
 
-    this.state = new Float64Array(PLANT + Plant.size(scenario, this.grid));
-    this.plantState = this.state.subarray(PLANT);
-    this.controlState = this.state.subarray(CONTROLLER, PLANT);
-    this.random = this.state.subarray(RANDOM, WATCH);
-    const printed = this.state.subarray(PRINTED_FROM, PRINTED_TO);
-    this.printed = new Uint32Array(printed.buffer, printed.byteOffset, 2 * printed.length);
+    this.state = new Float64Array(slot.PLANT + Plant.size(scenario, this.grid));
+    this.plantState = this.state.subarray(slot.PLANT);
+    this.controlState = this.state.subarray(slot.CONTROLLER, slot.PLANT);
+    this.random = this.state.subarray(slot.RANDOM, slot.WATCH);
 
-    this.print = new Fingerprint(this.state.subarray(PRINT, TICK));
+    this.print = new Fingerprint(this.state.subarray(slot.PRINT, slot.TICK));
     this.plant = new Plant(scenario, this.plantState, this.grid);
+    const printed = this.state.subarray(slot.PRINTED, slot.PLANT + this.plant.count);
+    this.printed = new Uint32Array(printed.buffer, printed.byteOffset, 2 * printed.length);
     const {now: n} = this.plant.equations;
     this.controller = new Controller(scenario, this.controlState, {
       atZero: n[now.INERTIA_AT_ZERO]!,
@@ -96,8 +87,11 @@ export class Simulation implements Run {
     this.news = this.controller.news;
     this.isDancer = scenario.sensing.kind === 'dancer';
     const stretchLimit = (web.stretchLimitPct ?? 1e9) / 100;
-    const watchState = this.state.subarray(WATCH, CONTROLLER);
+    const watchState = this.state.subarray(slot.WATCH, slot.CONTROLLER);
     this.watch = new Watch(watchState, sampleS, stretchLimit, brake.limitC ?? 150);
+    const {grid, plant, watch, state, printed: words} = this;
+    const parts = {scenario, grid, plant, controller: this.controller, watch, state};
+    this.quiet = new QuietTicks({...parts, printed: words});
 
     this.print.reset();
     seedWords(this.random, scenario.seed);
@@ -106,7 +100,7 @@ export class Simulation implements Run {
   }
 
   get tick(): number {
-    return this.state[TICK]!;
+    return this.state[slot.TICK]!;
   }
 
   get events(): readonly RunEvent[] {
@@ -138,14 +132,16 @@ export class Simulation implements Run {
 
   /** Counts one entry of a log. */
   stamp(): {readonly n: number; readonly tick: number} {
-    this.state[ENTRIES]!++;
-    return {n: this.state[ENTRIES]!, tick: this.tick};
+    this.state[slot.ENTRIES]!++;
+    return {n: this.state[slot.ENTRIES]!, tick: this.tick};
   }
 
   advance(ticks: number, block?: TraceBlock): number {
     const room = block === undefined ? ticks : Math.min(ticks, block.capacity - block.count);
     let run = 0;
     while (run < room && this.outcome.kind === 'running') {
+      run += this.quiet.advance(Math.min(room - run, this.ticksUndisturbed()), block);
+      if (run >= room) break;
       this.runTick(block);
       run++;
     }
@@ -153,7 +149,7 @@ export class Simulation implements Run {
   }
 
   view(): RunView {
-    return viewOf(this.parts, this.tick, this.grid.sampleS, this.state[SAMPLE]!);
+    return viewOf(this.parts, this.tick, this.grid.sampleS, this.state[slot.SAMPLE]!);
   }
 
   hash(): RunHash {
@@ -185,11 +181,21 @@ export class Simulation implements Run {
 
   /** One control tick, in the order of the model: commands, measure, control, move. */
   private runTick(block?: TraceBlock): void {
-    const {state, plantState, controlState, plant, news} = this;
-    const tick = state[TICK]!;
+    const {state, controlState, plant} = this;
+    const tick = state[slot.TICK]!;
     const t = tick * this.grid.sampleS;
-    if (block !== undefined) writePlant(block, this.parts, t);
+    if (this.quiet.isOpen) plant.openTick(t);
+    else this.openTick(tick, t, block);
+    this.quiet.isOpen = false;
+    plant.move(tick, controlState[control.APPLIED]!, controlState[control.SET_POINT]!);
+    this.lookAround(tick);
+    state[slot.TICK] = tick + 1;
+  }
 
+  /** The first half of a tick: what is due, the sample, the controller. */
+  private openTick(tick: number, t: number, block?: TraceBlock): void {
+    const {plantState, controlState, plant, news} = this;
+    if (block !== undefined) writePlant(block, this.parts, t);
     this.applyDue(tick, t);
     plant.openTick(t);
     this.measure();
@@ -202,10 +208,15 @@ export class Simulation implements Run {
     this.controller.tick();
     this.watch.phase(tick, controlState[control.PHASE]!);
     if (block !== undefined) writeControl(block, this.parts);
+  }
 
-    plant.move(tick, controlState[control.APPLIED]!, controlState[control.SET_POINT]!);
-    this.lookAround(tick);
-    state[TICK] = tick + 1;
+  /** Ticks before the next command or change. */
+  private ticksUndisturbed(): number {
+    const {state, schedule} = this;
+    if (this.isCareful || this.pending.length > 0) return 0;
+    const line = schedule.lines[state[slot.NEXT_LINE]!]?.tick ?? Infinity;
+    const change = schedule.changes[state[slot.NEXT_CHANGE]!]?.tick ?? Infinity;
+    return Math.max(0, Math.min(line, change) - this.tick);
   }
 
   /** Commands first, then changes, each the document's own before those of the log. */
@@ -214,17 +225,17 @@ export class Simulation implements Run {
     news[seen.RAN] = 0;
     news[seen.STOPPED] = seen.NO_STOP;
     for (;;) {
-      const due = schedule.lines[state[NEXT_LINE]!];
+      const due = schedule.lines[state[slot.NEXT_LINE]!];
       if (due === undefined || due.tick > tick) break;
       this.command(t, due.what);
-      state[NEXT_LINE]!++;
+      state[slot.NEXT_LINE]!++;
     }
     for (const act of pending) if ('line' in act) this.command(t, act.line);
     for (;;) {
-      const due = schedule.changes[state[NEXT_CHANGE]!];
+      const due = schedule.changes[state[slot.NEXT_CHANGE]!];
       if (due === undefined || due.tick > tick) break;
       this.change(t, due.what);
-      state[NEXT_CHANGE]!++;
+      state[slot.NEXT_CHANGE]!++;
     }
     for (const act of pending) if (!('line' in act)) this.change(t, act);
     if (pending.length > 0) this.pending = [];
@@ -261,7 +272,7 @@ export class Simulation implements Run {
     }
     const sample = cellSample(n, plantState[place.FILTER]!, nextNormal(this.random));
     news[seen.SAMPLE_N] = sample;
-    this.state[SAMPLE] = sample;
+    this.state[slot.SAMPLE] = sample;
   }
 
   /** At the tick of a run the line does not stand. */
@@ -270,7 +281,7 @@ export class Simulation implements Run {
   }
 
   private lookAround(tick: number): void {
-    const {plant, plantState, controlState, inForce} = this;
+    const {plant, plantState, controlState} = this;
     const {end} = plant;
     if (!this.isFinite()) {
       this.outcome = {kind: 'diverged', atTick: tick, atS: (tick + 1) * this.grid.sampleS};
@@ -289,7 +300,7 @@ export class Simulation implements Run {
         brakeC: plantState[place.HEAT]!,
         isAtStop: plant.equations.now[now.STOP] !== 0,
         limit,
-        limitPct: limit > 0 ? inForce.outMaxPct : inForce.outMinPct,
+        limitPct: this.controller.limitPct(),
       });
     }
     this.print.mixAll(this.printed);
@@ -314,7 +325,7 @@ export class Simulation implements Run {
       modulusPa: this.plantState[place.MODULUS]!,
       largestRadiusM: this.plantState[place.LARGEST]!,
       pending: this.pending,
-      later: this.schedule.changes.slice(this.state[NEXT_CHANGE]),
+      later: this.schedule.changes.slice(this.state[slot.NEXT_CHANGE]),
     });
   }
 }

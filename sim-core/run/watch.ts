@@ -40,8 +40,9 @@ export class Watch {
   constructor(
     private readonly state: Float64Array,
     private readonly sampleS: number,
-    private readonly stretchLimit: number,
-    private readonly hotC: number,
+    /** Strain from which on the web counts as stretched. */
+    readonly stretchLimit: number,
+    readonly hotC: number,
   ) {}
 
   /** The controller's phase in tick `tick`. */
@@ -68,6 +69,19 @@ export class Watch {
 
     if (seen.isAtStop && state[AT_STOP] === 0) this.say(tick, 'dancerStop');
     state[AT_STOP] = seen.isAtStop ? 1 : 0;
+  }
+
+  /** Whether nothing is going on that could end or is being counted. */
+  isIdle(): boolean {
+    const {state} = this;
+    return (
+      state[SLACK_TICKS] === 0 &&
+      state[LIMIT_TICKS] === 0 &&
+      state[LIMIT_ON] === 0 &&
+      state[STRETCHED] === 0 &&
+      state[HOT] === 0 &&
+      state[AT_STOP] === 0
+    );
   }
 
   /** Adds one event. */

@@ -26,6 +26,15 @@ export class Points {
     return this.y[piece]! + this.slope[piece]! * (x - this.x[piece]!);
   }
 
+  /** Straight line of a piece: value = start + rise·x. */
+  start(piece: number): number {
+    return piece < 0 ? this.y[0]! : this.y[piece]! - this.slope[piece]! * this.x[piece]!;
+  }
+
+  rise(piece: number): number {
+    return piece < 0 ? 0 : this.slope[piece]!;
+  }
+
   at(x: number): number {
     return this.on(this.piece(x), x);
   }

@@ -12,13 +12,13 @@ export function nextWord(state: Float64Array): number {
   const s1 = state[1]! | 0;
   let s2 = state[2]! | 0;
   let s3 = state[3]! | 0;
-  const word = Math.imul(rotate(Math.imul(s1, 5), 7), 9) >>> 0;
+  const word = Math.imul(rotated(Math.imul(s1, 5), 7), 9) >>> 0;
   s2 ^= s0;
   s3 ^= s1;
   state[0] = (s0 ^ s3) >>> 0;
   state[1] = (s1 ^ s2) >>> 0;
   state[2] = (s2 ^ (s1 << 9)) >>> 0;
-  state[3] = rotate(s3, 11) >>> 0;
+  state[3] = rotated(s3, 11) >>> 0;
   return word;
 }
 
@@ -36,7 +36,12 @@ export function seedWords(state: Float64Array, seed: number): void {
 
 /** One draw from the standard normal distribution: one word of the generator, put through its quantiles. */
 export function nextNormal(state: Float64Array): number {
-  return normalQuantile((nextWord(state) + 0.5) / 4294967296);
+  return normalOf(nextWord(state));
+}
+
+/** The draw that a word of the generator stands for. */
+export function normalOf(word: number): number {
+  return normalQuantile((word + 0.5) / 4294967296);
 }
 
 /**
@@ -58,7 +63,7 @@ export function normalQuantile(probability: number): number {
   return q < 0 ? -size : size;
 }
 
-function rotate(word: number, bits: number): number {
+export function rotated(word: number, bits: number): number {
   return (word << bits) | (word >>> (32 - bits));
 }
 

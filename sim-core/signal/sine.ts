@@ -23,6 +23,17 @@ export function cosine(angle: number): number {
   return turn === 0 || turn === 3 ? value : -value;
 }
 
+/** Sine and cosine of one angle [rad] at places 0 and 1 of `into`: the values of the functions above. */
+export function sineAndCosine(angle: number, into: Float64Array): void {
+  const quarter = Math.floor(angle * PER_QUARTER + 0.5);
+  const rest = angle - quarter * QUARTER_HIGH - quarter * QUARTER_LOW;
+  const turn = quarter - 4 * Math.floor(quarter / 4);
+  const near = sineNearZero(rest);
+  const far = cosineNearZero(rest);
+  into[0] = turn === 0 ? near : turn === 1 ? far : turn === 2 ? -near : -far;
+  into[1] = turn === 0 ? far : turn === 1 ? -near : turn === 2 ? -far : near;
+}
+
 /** Series to x¹⁷ for |x| <= π/4. */
 function sineNearZero(x: number): number {
   const s = x * x;
