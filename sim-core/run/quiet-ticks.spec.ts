@@ -1,13 +1,14 @@
 import * as a from '../reference/a-smooth-running.rows';
 import * as b from '../reference/b-start-step-stop.rows';
 import * as c from '../reference/c-out-of-round.rows';
+import * as d from '../reference/d-dancer-speed-change.rows';
 import * as e from '../reference/e-near-core-hot.rows';
 import * as f from '../reference/f-web-break.rows';
 import * as g from '../reference/g-rounded-ramps.rows';
 import {readScenario} from '../scenario/read-scenario';
 import {type Scenario} from '../scenario/scenario';
 import {LIVELY} from '../test-support/a-live-log';
-import {aScenario, type Parts} from '../test-support/a-scenario';
+import {aDancerScenario, aScenario, type Parts} from '../test-support/a-scenario';
 import {Simulation} from './simulation';
 import {TraceBlock, type TraceColumn} from './trace';
 
@@ -48,6 +49,7 @@ describe('quiet ticks', () => {
     'reference a': a.DOCUMENT as Scenario,
     'reference b': b.DOCUMENT as Scenario,
     'reference c': c.DOCUMENT as Scenario,
+    'reference d': d.DOCUMENT as Scenario,
     'reference e': e.DOCUMENT as Scenario,
     'reference g': g.DOCUMENT as Scenario,
     'noise, derivative, filter': LIVELY,
@@ -57,7 +59,8 @@ describe('quiet ticks', () => {
     it(`give what careful ticks give: ${name}`, () => {
       const rows = bothWays(scenario, Math.min(40, scenario.durationS));
       const {sensing} = scenario;
-      const rangeN = sensing.kind === 'loadCell' ? sensing.rangeN : 0;
+      const rangeN =
+        sensing.kind === 'loadCell' ? sensing.rangeN : 2 * scenario.controller.setPointN;
 
       expect(rows[0].count).toBe(rows[1].count);
       expect(apart(rows, 'tensionN') / rangeN).toBeLessThan(5e-5);
@@ -66,6 +69,7 @@ describe('quiet ticks', () => {
       expect(apart(rows, 'setPointN')).toBe(0);
       expect(apart(rows, 'phase')).toBe(0);
       expect(apart(rows, 'lineMps')).toBe(0);
+      expect(apart(rows, 'dancerM')).toBeLessThan(1e-5);
       expect(apart(rows, 'rollRadps')).toBeLessThan(1e-4);
       expect(apart(rows, 'radiusM')).toBeLessThan(1e-9);
       expect(apart(rows, 'torqueNm')).toBeLessThan(5e-3);
@@ -168,6 +172,12 @@ function variants(): Readonly<Record<string, Scenario>> {
     }),
     'output rate and resolution': of({controller: {outRatePctPerS: 8, outStepPct: 0.1}}),
     'by hand': of({controller: {mode: 'manual', manualPct: 40}}),
+    'a dancer': aDancerScenario(moving),
+    'a dancer, uneven roll, dead time': aDancerScenario({
+      ...moving,
+      roll: {eccentricityM: 0.001},
+      brake: {deadTimeS: 0.025},
+    }),
     'a slow sample': of({controller: {sampleS: 0.05}}),
     'a quick sample': of({controller: {sampleS: 0.004}}),
   };

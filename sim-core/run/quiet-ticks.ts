@@ -40,8 +40,8 @@ export interface QuietParts {
 }
 
 /**
- * The hot loop: control ticks of a load-cell stand in which nothing bends, that is, taut web on a turning roll,
- * the line above a crawl and without a kink in its speed. Four stages of Runge–Kutta as in `plant.ts`, but
+ * The hot loop: control ticks in which nothing bends, that is, taut web on a turning roll, the line above a crawl
+ * and without a kink in its speed, a dancer between its stops. Four stages of Runge–Kutta as in `plant.ts`, but
  * with the strain as state, radius and inertia as lines over the tick, the turn of an uneven roll by series, and
  * two to five milliseconds a step. Whatever it meets that is not so it leaves to the careful tick. Nothing is
  * carried from tick to tick but the run's state, so a run may be cut anywhere.
@@ -75,8 +75,7 @@ export class QuietTicks {
     this.steps = new QuietSteps(scenario, grid, plant.drive.changesAtStep);
     const oneLag = (brake.lagUpS ?? brake.lagS) === (brake.lagDownS ?? brake.lagS);
     this.isFit =
-      sensing.kind === 'loadCell' &&
-      sensing.filterS > 0 &&
+      (sensing.kind === 'dancer' || sensing.filterS > 0) &&
       oneLag &&
       (web.maxwellModulusPa ?? 0) === 0 &&
       (scenario.span.rollerRunoutM ?? 0) === 0;
@@ -124,7 +123,12 @@ export class QuietTicks {
     const noiseN = n[now.NOISE]!;
     const leastN = LEAST_SHARE * n[now.RANGE]!;
     const greatestN = GREATEST_SHARE * n[now.RANGE]!;
-    const perRange = 100 / n[now.RANGE]!;
+    const isDancer = this.equations.hasDancer;
+    const travelM = n[now.TRAVEL]!;
+    const perMass = n[now.PER_MASS]!;
+    const damping = n[now.DAMPING]!;
+    const perRange = 100 / (isDancer ? travelM : n[now.RANGE]!);
+    const sense = isDancer ? -1 : 1;
     const {changesAtS, fewest} = steps;
     const slowMps = DRAG_FULL_MPS;
     const leastFade = LEAST_FADE;
@@ -139,13 +143,13 @@ export class QuietTicks {
     const target = tuning[set.TARGET]!;
     const mostRise = tuning[set.RATE]! > 0 ? tuning[set.RATE]! * sampleS : Infinity;
     const perReference = tuning[set.PER_REFERENCE]!;
-    const gain = tuning[set.KP]!;
+    const gain = sense * tuning[set.KP]!; // signed: more of a dancer's travel asks for more brake
     const weight = tuning[set.WEIGHT]!;
     const tdS = tuning[set.TD]!;
     const slowS = tdS / tuning[set.DERIVATIVE_N]!;
     const outMax = tuning[set.OUT_MAX]!;
     const outMin = tuning[set.OUT_MIN]!;
-    const perTick = tuning[set.TI]! > 0 ? (gain * sampleS) / tuning[set.TI]! : 0;
+    const perTick = tuning[set.TI]! > 0 ? (tuning[set.KP]! * sampleS) / tuning[set.TI]! : 0;
     const windup = tuning[set.WINDUP]!;
     const tracking = windup === set.BACK_CALCULATION ? sampleS / tuning[set.TRACKING_S]! : 0;
     const hasAssist = tuning[set.ASSIST]! > 0;
@@ -153,6 +157,7 @@ export class QuietTicks {
     // (step × natural frequency)² and the like, for one step in the tick
     const swing = (stiffness * perSpan * sampleS * sampleS) / (QUIET_RAD * QUIET_RAD);
     const loss = (lossNS * perSpan * sampleS) / QUIET_SHARE;
+    const calm = (damping * perMass * sampleS) / QUIET_SHARE;
     const fall = ((residual + torqueSpan) * extraGrip * perGripSpeed * sampleS) / QUIET_SHARE;
     const words = printed.length;
 
@@ -191,7 +196,10 @@ export class QuietTicks {
       const wound0 = p[at.WOUND]!;
       const length0 = p[at.LENGTH]!;
       if (!(c0 >= slowMps && c0 + sampleS * (c1 + sampleS * c2) >= slowMps)) break;
-      if (!(omega0 > 0 && length0 < spanM && wound0 > NEARLY_EMPTY_M)) break;
+      let dancer = p[at.DANCER]!;
+      const path0 = spanM + 2 * dancer;
+      if (!(omega0 > 0 && length0 < path0 && wound0 > NEARLY_EMPTY_M)) break;
+      if (isDancer && !(dancer > 0 && dancer < travelM)) break;
 
       // roll: R and 1/J and their slopes over the tick, from one root and one division
       const square = coreSquare + perLength * wound0;
@@ -204,11 +212,11 @@ export class QuietTicks {
         -4 * perInertia0 * perInertia0 * inertiaPerFourth * square * radius0 * radiusSlope;
 
       // how finely
-      const perMass = square * perInertia0;
+      const yields = square * perInertia0 + 4 * perMass; // [1/kg]
       let fine = fewest;
       while (
-        fine * fine < swing * perMass ||
-        fine < loss * perMass ||
+        fine * fine < swing * yields ||
+        fine < loss * yields + calm ||
         fine < fall * perInertia0 ||
         (isOut && fine * QUIET_RAD < 2 * omega0 * sampleS)
       )
@@ -238,23 +246,26 @@ export class QuietTicks {
         out[to + COLUMN.torqueNm] =
           (residual + torqueSpan * (atPiece + onPiece * x)) * faded * (1 + extraGrip / (1 + z * z));
         out[to + COLUMN.brakeC] = heat;
-        out[to + COLUMN.dancerM] = 0;
+        out[to + COLUMN.dancerM] = dancer;
       }
 
       // sample: xoshiro128** as in random.ts, its words in locals
-      const word = rotated(Math.imul(word1, 5), 7);
-      const shifted = word1 << 9;
-      word2 ^= word0;
-      word3 ^= word1;
-      word1 ^= word2;
-      word0 ^= word3;
-      word2 ^= shifted;
-      word3 = rotated(word3, 11);
-      let sample = filter;
-      if (noiseN > 0) sample += noiseN * normalOf(Math.imul(word, 9) >>> 0);
-      if (sample < leastN) sample = leastN;
-      else if (sample > greatestN) sample = greatestN;
-      state[run.SAMPLE] = sample;
+      let sample = dancer;
+      if (!isDancer) {
+        const word = rotated(Math.imul(word1, 5), 7);
+        const shifted = word1 << 9;
+        word2 ^= word0;
+        word3 ^= word1;
+        word1 ^= word2;
+        word0 ^= word3;
+        word2 ^= shifted;
+        word3 = rotated(word3, 11);
+        sample = filter;
+        if (noiseN > 0) sample += noiseN * normalOf(Math.imul(word, 9) >>> 0);
+        if (sample < leastN) sample = leastN;
+        else if (sample > greatestN) sample = greatestN;
+        state[run.SAMPLE] = sample;
+      }
 
       // control
       if (
@@ -263,19 +274,26 @@ export class QuietTicks {
         c[control.CLOSED] === 1 &&
         !(hasAssist && c1 < 0)
       ) {
-        let input = (sample - zeroAdjust) * inputGain;
-        if (inputShare < 1) {
-          const before = c[control.INPUT]!;
-          input = before + inputShare * (input - before);
-        }
         let setPoint = target;
         const before = c[control.SET_POINT]!;
         if (target - before > mostRise) setPoint = before + mostRise;
         else if (before - target > mostRise) setPoint = before - mostRise;
-        const y = perRange * input;
-        const error = perRange * setPoint - y;
+        c[control.SET_POINT] = setPoint;
+        let y = perRange * sample; // [% of range or travel]
+        let r = 50;
+        if (!isDancer) {
+          let input = (sample - zeroAdjust) * inputGain;
+          if (inputShare < 1) {
+            const inputBefore = c[control.INPUT]!;
+            input = inputBefore + inputShare * (input - inputBefore);
+          }
+          c[control.INPUT] = input;
+          y = perRange * input;
+          r = perRange * setPoint;
+        }
+        const error = sense * (r - y);
         let integral = c[control.INTEGRAL]!;
-        let inner = gain * (weight * (perRange * setPoint) - y) + integral;
+        let inner = gain * (weight * r - y) + integral;
         let derivative = 0;
         if (tdS > 0) {
           const change = y - c[control.LAST_Y]!;
@@ -294,8 +312,6 @@ export class QuietTicks {
         }
         if (windup !== set.CONDITIONAL || !(limit * error > 0))
           integral += perTick * error + (perTick > 0 ? tracking * (output - wanted) : 0);
-        c[control.INPUT] = input;
-        c[control.SET_POINT] = setPoint;
         c[control.RADIUS] = radius0;
         c[control.INTEGRAL] = integral;
         c[control.DERIVATIVE] = derivative;
@@ -306,7 +322,8 @@ export class QuietTicks {
       } else {
         news[seen.RAN] = 0;
         news[seen.STOPPED] = seen.NO_STOP;
-        news[seen.SAMPLE_N] = sample;
+        if (isDancer) news[seen.DANCER_PCT] = perRange * sample;
+        else news[seen.SAMPLE_N] = sample;
         news[seen.TICK] = tick;
         news[seen.STANDS] = line.stands(t) ? 1 : 0;
         news[seen.MEAN_RADIUS] = radius0;
@@ -328,7 +345,9 @@ export class QuietTicks {
       let omega = omega0;
       let theta = p[at.THETA]!;
       let wound = wound0;
-      let s = spanM / length0; // 1 + strain
+      let s = path0 / length0; // 1 + strain
+      let dancerSpeed = p[at.DANCER_SPEED]!;
+      const loadingN = c[control.SET_POINT]!;
       let cos = 0;
       let sin = 0;
       if (isOut) {
@@ -378,9 +397,9 @@ export class QuietTicks {
 
           const middle = into + half;
           const end = into + stepS;
-          const speed1 = perSpan * (c0 + into * (c1 + into * c2));
-          const speed2 = perSpan * (c0 + middle * (c1 + middle * c2));
-          const speed4 = perSpan * (c0 + end * (c1 + end * c2));
+          const v1 = c0 + into * (c1 + into * c2);
+          const v2 = c0 + middle * (c1 + middle * c2);
+          const v4 = c0 + end * (c1 + end * c2);
           const lost1 = stiffness + idlerN + idlerKg * (c1 + 2 * into * c2);
           const lost2 = stiffness + idlerN + idlerKg * (c1 + 2 * middle * c2);
           const lost4 = stiffness + idlerN + idlerKg * (c1 + 2 * end * c2);
@@ -396,9 +415,18 @@ export class QuietTicks {
             drag1 += (drag1 * extraGrip) / (1 + z * z);
           }
           const paid1 = omega * (r * perWound);
-          const slope1 = s * speed1 - s * s * perSpan * paid1;
+          let perPath = perSpan;
+          let nip = v1;
+          if (isDancer) {
+            perPath = 1 / (spanM + 2 * dancer);
+            nip += 2 * dancerSpeed;
+          }
+          const slope1 = s * perPath * nip - s * s * perPath * paid1;
           const pull1 = stiffness * s - lost1 + lossNS * slope1;
           const turn1 = perInertia * r * pull1 - (perInertia * (drag1 + coulomb) + slowed * omega);
+          const push1 = isDancer
+            ? perMass * (2 * (loadingN - (pull1 + (lost1 - stiffness))) - damping * dancerSpeed)
+            : 0;
 
           // stage 2
           const omega2 = omega + half * turn1;
@@ -416,9 +444,20 @@ export class QuietTicks {
             drag2 += (drag2 * extraGrip) / (1 + z * z);
           }
           const paid2 = omega2 * (r * perWound);
-          const slope2 = s2 * speed2 - s2 * s2 * perSpan * paid2;
+          let dancerSpeed2 = 0;
+          perPath = perSpan;
+          nip = v2;
+          if (isDancer) {
+            dancerSpeed2 = dancerSpeed + half * push1;
+            perPath = 1 / (spanM + 2 * (dancer + half * dancerSpeed));
+            nip += 2 * dancerSpeed2;
+          }
+          const slope2 = s2 * perPath * nip - s2 * s2 * perPath * paid2;
           const pull2 = stiffness * s2 - lost2 + lossNS * slope2;
           const turn2 = perInertia * r * pull2 - (perInertia * (drag2 + coulomb) + slowed * omega2);
+          const push2 = isDancer
+            ? perMass * (2 * (loadingN - (pull2 + (lost2 - stiffness))) - damping * dancerSpeed2)
+            : 0;
 
           // stage 3
           const omega3 = omega + half * turn2;
@@ -436,9 +475,20 @@ export class QuietTicks {
             drag3 += (drag3 * extraGrip) / (1 + z * z);
           }
           const paid3 = omega3 * (r * perWound);
-          const slope3 = s3 * speed2 - s3 * s3 * perSpan * paid3;
+          let dancerSpeed3 = 0;
+          perPath = perSpan;
+          nip = v2;
+          if (isDancer) {
+            dancerSpeed3 = dancerSpeed + half * push2;
+            perPath = 1 / (spanM + 2 * (dancer + half * dancerSpeed2));
+            nip += 2 * dancerSpeed3;
+          }
+          const slope3 = s3 * perPath * nip - s3 * s3 * perPath * paid3;
           const pull3 = stiffness * s3 - lost2 + lossNS * slope3;
           const turn3 = perInertia * r * pull3 - (perInertia * (drag3 + coulomb) + slowed * omega3);
+          const push3 = isDancer
+            ? perMass * (2 * (loadingN - (pull3 + (lost2 - stiffness))) - damping * dancerSpeed3)
+            : 0;
 
           // stage 4
           const omega4 = omega + stepS * turn3;
@@ -456,15 +506,34 @@ export class QuietTicks {
             drag4 += (drag4 * extraGrip) / (1 + z * z);
           }
           const paid4 = omega4 * (r * perWound);
-          const slope4 = s4 * speed4 - s4 * s4 * perSpan * paid4;
+          let dancerSpeed4 = 0;
+          perPath = perSpan;
+          nip = v4;
+          if (isDancer) {
+            dancerSpeed4 = dancerSpeed + stepS * push3;
+            perPath = 1 / (spanM + 2 * (dancer + stepS * dancerSpeed3));
+            nip += 2 * dancerSpeed4;
+          }
+          const slope4 = s4 * perPath * nip - s4 * s4 * perPath * paid4;
           const pull4 = stiffness * s4 - lost4 + lossNS * slope4;
           const turn4 = perInertia * r * pull4 - (perInertia * (drag4 + coulomb) + slowed * omega4);
+          const push4 = isDancer
+            ? perMass * (2 * (loadingN - (pull4 + (lost4 - stiffness))) - damping * dancerSpeed4)
+            : 0;
 
           const turned = sixth * (omega + 2 * (omega2 + omega3) + omega4);
           const power =
             (drag1 * omega + 2 * (drag2 * omega2 + drag3 * omega3) + drag4 * omega4) / 6;
           omega += sixth * (turn1 + 2 * (turn2 + turn3) + turn4);
           s += sixth * (slope1 + 2 * (slope2 + slope3) + slope4);
+          if (isDancer) {
+            dancer += sixth * (dancerSpeed + 2 * (dancerSpeed2 + dancerSpeed3) + dancerSpeed4);
+            dancerSpeed += sixth * (push1 + 2 * (push2 + push3) + push4);
+            if (!(dancer > 0 && dancer < travelM)) {
+              isQuiet = false;
+              break;
+            }
+          }
           if (
             !(pull1 > floorN && pull2 > floorN && pull3 > floorN && pull4 > floorN) ||
             !(pull1 < ceilingN && pull2 < ceilingN && pull3 < ceilingN && pull4 < ceilingN) ||
@@ -505,8 +574,9 @@ export class QuietTicks {
       // the tension at the end of the tick
       let radius = radius0 + radiusSlope * sampleS;
       if (isOut) radius += eccentricity * cos + oval * (2 * cos * cos - 1);
-      const speed = perSpan * (c0 + sampleS * (c1 + sampleS * c2));
-      const slope = s * speed - s * s * perSpan * omega * (radius * perWound);
+      const path = spanM + 2 * dancer;
+      const nipEnd = c0 + sampleS * (c1 + sampleS * c2) + 2 * dancerSpeed;
+      const slope = (s * nipEnd - s * s * omega * (radius * perWound)) / path;
       const tension = stiffness * (s - 1) + lossNS * slope;
       if (!isQuiet || !(tension > 0 && tension < breakN)) {
         this.isOpen = true;
@@ -515,7 +585,11 @@ export class QuietTicks {
       p[at.OMEGA] = omega;
       p[at.THETA] = theta < turn ? theta : withinTurn(theta);
       p[at.WOUND] = wound;
-      p[at.LENGTH] = spanM / s;
+      p[at.LENGTH] = path / s;
+      if (isDancer) {
+        p[at.DANCER] = dancer;
+        p[at.DANCER_SPEED] = dancerSpeed;
+      }
       p[at.HEAT] = heat;
       p[at.FILTER] = filter;
       p[at.DRIVE] = x;
