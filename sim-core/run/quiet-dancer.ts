@@ -2,7 +2,6 @@ import {LEAST_FADE} from '../plant/brake';
 import * as now from '../plant/evaluation';
 import * as at from '../plant/plant-state';
 import {withinTurn} from '../plant/stand';
-import {TWO_PI} from '../signal/sine';
 import * as of from './quiet-plant';
 import {QuietPlant} from './quiet-plant';
 import * as table from './quiet-steps';
@@ -231,7 +230,7 @@ export class QuietDancer extends QuietPlant {
     const tension = stiffness * (s - 1) + lossNS * slope;
     if (!(tension > 0 && tension < breakN)) return false;
     p[at.OMEGA] = omega;
-    p[at.THETA] = theta < TWO_PI ? theta : withinTurn(theta);
+    p[at.THETA] = withinTurn(theta); // asked each time: a way first taken late makes the loop compile anew
     p[at.WOUND] = wound;
     p[at.LENGTH] = path / s;
     p[at.DANCER] = dancer;
