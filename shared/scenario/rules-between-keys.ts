@@ -46,6 +46,9 @@ function plantRules(scenario: Scenario, plantStepS: number): BrokenRule[] {
   return broken;
 }
 
+/** Shortest integral time [s], the engine's. */
+const LEAST_TI_S = 1e-4;
+
 const TOO_SHORT = 'Must be 0 or at least two plant steps.';
 
 function isShort(timeS: number, plantStepS: number): boolean {
@@ -71,6 +74,11 @@ function settingsRules(
   if (value('antiWindup') === 'backCalculation' && value('trackingS') === null)
     refuse('trackingS', 'Needed, as antiWindup is backCalculation.');
   if (isShort(value('inputFilterS') as number, plantStepS)) refuse('inputFilterS', TOO_SHORT);
+  const tiS = value('tiS') as number;
+  if (tiS > 0 && tiS < LEAST_TI_S) refuse('tiS', 'Must be 0 or at least 0.1 ms.');
+  const trackingS = value('trackingS') as number | null;
+  if (trackingS !== null && trackingS < (value('sampleS' as keyof LiveSettings) as number) / 2)
+    refuse('trackingS', 'Must be at least half the sample period.');
   return broken;
 }
 

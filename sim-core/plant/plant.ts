@@ -16,6 +16,12 @@ import {type Grid, Stand, withinTurn} from './stand';
 const DEEPEST_KINK = 6;
 const DEEPEST = 16;
 
+/**
+ * Steps of a tick after which no bend is looked at closer: a web that is just loose on a line that just creeps
+ * bends in every step, and a tick must end.
+ */
+const MOST_IN_TICK = 4000;
+
 /** Times closer than this are the same moment [s]. */
 const SAME_S = 1e-12;
 
@@ -68,6 +74,7 @@ export class Plant {
   /** States looked after: all of them only with a dancer, a roller with run-out or a relaxing web. */
   readonly count: number;
   private region = 0;
+  private spent = 0;
   private piece = 0;
 
   static size(scenario: Scenario, grid: Grid): number {
@@ -140,6 +147,7 @@ export class Plant {
     let changesAtS = early === late ? 0 : drive.changesAtStep * grid.plantStepS;
     this.setCommand(changesAtS > 0 ? early : late);
     times[FROM] = 0;
+    this.spent = 0;
     this.look();
     if (this.ended()) return;
     if (this.rest(changesAtS, late)) return;
@@ -260,11 +268,13 @@ export class Plant {
       s0[i] = k1[i]!;
     }
     this.rungeKutta();
+    this.spent++;
     const bends = regionOf(this.equations, y) ^ this.region;
     if (bends === 0) return true;
     if (isJustLoose(this.equations, bends)) return this.cross();
     const deepest = (bends & JUMPS) === 0 ? DEEPEST_KINK : DEEPEST;
-    return depth < deepest ? this.halve(depth) : this.cross();
+    const isWorthIt = depth < deepest && this.spent < MOST_IN_TICK;
+    return isWorthIt ? this.halve(depth) : this.cross();
   }
 
   /** Takes a step back and does it again in two halves. */

@@ -1,3 +1,4 @@
+import {Plant} from '../plant/plant';
 import {ScenarioError} from '../scenario/faults';
 import {aDancerScenario, aScenario} from '../test-support/a-scenario';
 import {live, LIVELY} from '../test-support/a-live-log';
@@ -206,5 +207,53 @@ describe('acts', () => {
     expect(run.settings()['kp']).toBe(0.1);
     run.advance(1);
     expect(run.settings()['kp']).toBe(0.2);
+  });
+});
+
+describe('what JSON cannot carry', () => {
+  it('is not felt: a run with −0 is the run of the document that was stored', () => {
+    const lived = startRun(aScenario({roll: {ovalM: -0}, controller: {manualPct: -0}}));
+    lived.act({set: {mode: 'manual', manualPct: -0}});
+    lived.advance(300);
+    const stored = startRun(aScenario({roll: {ovalM: 0}, controller: {manualPct: 0}}));
+    stored.act({set: {mode: 'manual', manualPct: 0}});
+    stored.advance(300);
+
+    expect(lived.hash()).toBe(stored.hash());
+  });
+});
+
+describe('settings that no loop stands', () => {
+  it('are refused by name: an integral time next to nothing, a tracking time below half a tick', () => {
+    expect(() => startRun(aScenario({controller: {tiS: 1e-310}}))).toThrowError(/controller\.tiS/);
+    const tracking = {antiWindup: 'backCalculation', trackingS: 0.004} as const;
+
+    expect(() => startRun(aScenario({controller: tracking}))).toThrowError(/trackingS/);
+    expect(() => startRun(aScenario()).act({set: tracking})).toThrowError(/set\.trackingS/);
+  });
+});
+
+describe('a tick', () => {
+  // a web that is just loose on a line that just creeps bends in every step, and each was halved to the last
+  it('ends within a bounded number of steps', () => {
+    const steps = Plant.prototype as unknown as {rungeKutta: () => void};
+    const {rungeKutta} = steps;
+    let count = 0;
+    steps.rungeKutta = function (this: Plant): void {
+      count++;
+      rungeKutta.call(this);
+    };
+    const run = startRun(
+      aScenario({
+        initialTensionN: 0,
+        line: [{atS: 0.2, command: 'run', speedMps: 1e-9, rampS: 1}],
+      }),
+    );
+    run.advance(60);
+    steps.rungeKutta = rungeKutta;
+
+    expect(run.outcome.kind).toBe('running');
+    expect(count).toBeGreaterThan(60);
+    expect(count).toBeLessThan(60 * 4100);
   });
 });

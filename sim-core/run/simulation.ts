@@ -9,6 +9,7 @@ import {cellSample} from '../plant/sensing';
 import {type Fault, ScenarioError} from '../scenario/faults';
 import {type LineCommand, type Scenario} from '../scenario/scenario';
 import {changed, type Settings, settingsOf} from '../scenario/settings';
+import {withoutNegativeZeros} from '../scenario/zeros';
 import {nextNormal, seedWords} from '../signal/random';
 import {faultsAhead} from './act-rules';
 import {Fingerprint} from './hash';
@@ -39,6 +40,7 @@ interface Saved extends SavedRun {
 export class Simulation implements Run {
   outcome: Outcome = {kind: 'running'};
 
+  private readonly scenario: Scenario;
   private readonly grid: Grid;
   private readonly schedule: Schedule;
   private readonly state: Float64Array;
@@ -57,11 +59,13 @@ export class Simulation implements Run {
   private readonly news: Float64Array;
   private readonly isDancer: boolean;
 
-  /** `scenario` has been checked. `isCareful`: no tick takes the hot loop's way, which the specs compare. */
+  /** The document has been checked. `isCareful`: no tick takes the hot loop's way, which the specs compare. */
   constructor(
-    private readonly scenario: Scenario,
+    checked: Scenario,
     private readonly isCareful = false,
   ) {
+    const scenario = withoutNegativeZeros(checked);
+    this.scenario = scenario;
     const {web, brake, controller} = scenario;
     this.inForce = settingsOf(controller);
     const {sampleS, standstillPct} = this.inForce;
@@ -112,11 +116,11 @@ export class Simulation implements Run {
   }
 
   act(act: Act): LogEntry {
-    this.take(act, '');
+    const taken = this.take(act, '');
     const stamp = this.stamp();
-    if ('set' in act) return {...stamp, kind: 'set', set: act.set} satisfies EngineEntry;
-    if ('line' in act) return {...stamp, kind: 'line', line: act.line} satisfies EngineEntry;
-    return {...stamp, kind: 'disturb', disturb: act.disturb} satisfies EngineEntry;
+    if ('set' in taken) return {...stamp, kind: 'set', set: taken.set} satisfies EngineEntry;
+    if ('line' in taken) return {...stamp, kind: 'line', line: taken.line} satisfies EngineEntry;
+    return {...stamp, kind: 'disturb', disturb: taken.disturb} satisfies EngineEntry;
   }
 
   note(note: Note): LogEntry {
@@ -124,10 +128,12 @@ export class Simulation implements Run {
   }
 
   /** Takes an act for the next tick without a stamp; `at` names it in the faults. */
-  take(act: Act, at: string): void {
+  take(act: Act, at: string): Act {
     const faults = this.faultsOf(act, at);
     if (faults.length > 0) throw new ScenarioError(faults);
-    this.pending.push(act);
+    const taken = withoutNegativeZeros(act);
+    this.pending.push(taken);
+    return taken;
   }
 
   /** Counts one entry of a log. */

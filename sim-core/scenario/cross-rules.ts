@@ -6,6 +6,9 @@ import {type Settings} from './settings';
 /** Part of a tick within which a time counts as reached [s]. */
 export const GRACE_S = 1e-9;
 
+/** Shortest integral time [s]; 0 switches the integral part off. */
+const LEAST_TI_S = 1e-4;
+
 /** Rules between keys of the controller; `at` is where the settings came from. */
 export function settingsFaults(at: string, settings: Settings, plantStepS: number): Fault[] {
   const faults: Fault[] = [];
@@ -18,6 +21,11 @@ export function settingsFaults(at: string, settings: Settings, plantStepS: numbe
   if (settings.antiWindup === 'backCalculation' && settings.trackingS === null)
     refuse('trackingS', 'a time, as antiWindup is backCalculation');
   if (isShort(settings.inputFilterS, plantStepS)) refuse('inputFilterS', noShorter(plantStepS));
+  if (settings.tiS > 0 && settings.tiS < LEAST_TI_S)
+    refuse('tiS', `0, or at least ${LEAST_TI_S} s`);
+  const leastS = settings.sampleS / 2;
+  if (settings.trackingS !== null && settings.trackingS < leastS)
+    refuse('trackingS', `at least half the sample period (${leastS} s): less makes it swing up`);
   return faults;
 }
 
