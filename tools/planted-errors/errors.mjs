@@ -3,9 +3,17 @@
 
 const EQUATIONS = 'sim-core/plant/equations.ts';
 const LOOP = 'sim-core/run/quiet-ticks.ts';
-const MOVE = "sim-core/run/quiet-plant.ts";
+const MOVE = 'sim-core/run/quiet-plant.ts';
+const CELL = 'sim-core/run/quiet-cell.ts';
+const DANCER = 'sim-core/run/quiet-dancer.ts';
 const PID = 'sim-core/control/pid.ts';
 const CONTROLLER = 'sim-core/control/controller.ts';
+
+/** The same edit in the stages of both kinds of stand. */
+const each = (from, to) => [
+  [CELL, from, to],
+  [DANCER, from, to],
+];
 
 /** `edits`: file, what stands there, what is put in its place, everywhere in the file. */
 export const ERRORS = [
@@ -13,7 +21,10 @@ export const ERRORS = [
     name: 'R for R_e: an uneven roll pulls at its mean radius',
     edits: [
       [EQUATIONS, 'rollN * radius : 0', 'rollN * Math.sqrt(square) : 0'],
-      [LOOP, 'perInertia * r * pull', 'perInertia * radius0 * pull'],
+      ...each('perInertia * r1 * pull1', 'perInertia * radius0 * pull1'),
+      ...each('perInertia * r2 * pull2', 'perInertia * radius0 * pull2'),
+      ...each('perInertia * r2 * pull3', 'perInertia * radius0 * pull3'),
+      ...each('perInertia * r4 * pull4', 'perInertia * radius0 * pull4'),
     ],
   },
   {
@@ -24,7 +35,9 @@ export const ERRORS = [
         'omega * radius * n[now.PER_WOUND]',
         'omega * Math.sqrt(square) * n[now.PER_WOUND]',
       ],
-      [LOOP, '(r * perWound)', '(radius0 * perWound)'],
+      ...each('(r1 * perWound)', '(radius0 * perWound)'),
+      ...each('(r2 * perWound)', '(radius0 * perWound)'),
+      ...each('(r4 * perWound)', '(radius0 * perWound)'),
     ],
   },
   {
@@ -49,7 +62,7 @@ export const ERRORS = [
     name: 'viscous drag with the wrong sign',
     edits: [
       [EQUATIONS, 'pull - n[now.VISCOUS]! * omega', 'pull + n[now.VISCOUS]! * omega'],
-      [LOOP, 'perInertia * viscous', '-perInertia * viscous'],
+      ...each('perInertia * viscous', '-perInertia * viscous'),
     ],
   },
   {
@@ -60,7 +73,7 @@ export const ERRORS = [
     name: 'inertia with the cube of the radius',
     edits: [
       ['sim-core/plant/roll.ts', '(squareM2 * squareM2)', '(squareM2 * Math.sqrt(squareM2))'],
-      [LOOP, 'inertiaPerFourth * square * square;', 'inertiaPerFourth * square * radius0;'],
+      [MOVE, 'perFourth * square * square;', 'perFourth * square * radius;'],
     ],
   },
   {
@@ -71,11 +84,10 @@ export const ERRORS = [
         'drag * sliding) / inertia(n, square)',
         'drag * sliding + 2 * omega * paidOut * square * n[now.INERTIA_PER_FOURTH]! * n[now.PER_LENGTH]!) / inertia(n, square)',
       ],
-      [
-        LOOP,
+      ...each(
         '(perInertia * (drag',
-        '(-perInertia * 2 * omega * omega * r * perWound * square * inertiaPerFourth * perLength + perInertia * (drag',
-      ],
+        '(-perInertia * 2 * omega * omega * radius0 * radius0 * radius0 * perWound * n[now.INERTIA_PER_FOURTH]! * n[now.PER_LENGTH]! + perInertia * (drag',
+      ),
     ],
   },
   {
@@ -106,9 +118,9 @@ export const ERRORS = [
     name: 'sensor reads the tension at the roll',
     edits: [
       [EQUATIONS, '(this.signal(tension) - y[at.FILTER]!)', '(this.signal(rollN) - y[at.FILTER]!)'],
-      [LOOP, '(lost1 - stiffness)', '0'],
-      [LOOP, '(lost2 - stiffness)', '0'],
-      [LOOP, '(lost4 - stiffness)', '0'],
+      [CELL, '(lost1 - stiffness)', '0'],
+      [CELL, '(lost2 - stiffness)', '0'],
+      [CELL, '(lost4 - stiffness)', '0'],
     ],
   },
   {
@@ -129,7 +141,7 @@ export const ERRORS = [
     name: 'heat from the drive’s torque before fade',
     edits: [
       [EQUATIONS, '(torque * Math.abs(omega)', '((torque / n[now.FADE]!) * Math.abs(omega)'],
-      [LOOP, 'heats * (power - ', 'heats * (power / faded - '],
+      ...each('heats * (power - ', 'heats * (power / faded - '),
     ],
   },
   {
@@ -180,7 +192,7 @@ export const ERRORS = [
     name: 'gain falls where it should rise with the radius',
     edits: [
       [CONTROLLER, 'radius * perReference', '1 / (radius * perReference)'],
-      [LOOP, 'inner * radius0 * perReference', 'inner / (radius0 * perReference)'],
+      [LOOP, 'inner * radius * perReference', 'inner / (radius * perReference)'],
     ],
   },
   {
@@ -215,16 +227,18 @@ export const ERRORS = [
     name: 'dancer feels the web once, not twice',
     edits: [
       [EQUATIONS, '2 * n[now.LOADING]! - 2 * tension', '2 * n[now.LOADING]! - tension'],
-      [LOOP, '(2 * (loadingN - (pull', '(2 * loadingN - (pull'],
-      [LOOP, ' - stiffness))) - damping', ' - stiffness)) - damping'],
+      [DANCER, '(2 * (loadingN - (pull', '(2 * loadingN - (pull'],
+      [DANCER, ' - stiffness))) - damping', ' - stiffness)) - damping'],
     ],
   },
   {
     name: 'hot loop alone: the turn of the roll forgotten between steps',
-    edits: [[LOOP, 'sin = sin * near + before * far;', 'sin = sin * near;']],
+    edits: each('sin = sin * near + before * far;', 'sin = sin * near;'),
   },
   {
     name: 'hot loop alone: radius kept over a tick',
-    edits: [[LOOP, '-perLength * omega0 * radius0 * perWound * inertia * inverse', '0']],
+    edits: [
+      [MOVE, '-n[now.PER_LENGTH]! * omega * radius * n[now.PER_WOUND]! * inertia * inverse', '0'],
+    ],
   },
 ];

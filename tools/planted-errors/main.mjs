@@ -17,6 +17,8 @@ try {
   for (const each of ['package.json', 'tsconfig.json', 'tsconfig.base.json'])
     fs.copyFileSync(path.join(ROOT, each), path.join(folder, each));
   fs.symlinkSync(path.join(ROOT, 'node_modules'), path.join(folder, 'node_modules'));
+  // what is tried is what lies there now, whatever happens to it meanwhile
+  fs.cpSync(path.join(ROOT, 'sim-core'), path.join(folder, 'clean'), {recursive: true});
   const clean = plant([]);
   if (clean.failed.length > 0) throw new Error(`Red without an error:\n${clean.failed.join('\n')}`);
 
@@ -37,7 +39,7 @@ try {
 function plant(edits) {
   const engine = path.join(folder, 'sim-core');
   fs.rmSync(engine, {recursive: true, force: true});
-  fs.cpSync(path.join(ROOT, 'sim-core'), engine, {recursive: true});
+  fs.cpSync(path.join(folder, 'clean'), engine, {recursive: true});
   for (const [file, from, to] of edits) {
     const place = path.join(folder, file);
     const text = fs.readFileSync(place, 'utf8');

@@ -23,6 +23,11 @@ export class TraceStore {
     this.clear();
   }
 
+  /** Bytes that a row takes, the pyramids for drawing left out. */
+  get bytesPerRow(): number {
+    return this.columns.reduce((sum, column) => sum + column.BYTES_PER_ELEMENT, 0);
+  }
+
   clear(): void {
     this.count = 0;
     this.room = FIRST_ROWS;
