@@ -16,6 +16,7 @@ export const parts = [
   {name: 'lint', group: 'lint', run: runLint},
   {name: 'types', group: 'types', run: runTypes},
   {name: 'engine', group: 'unit', run: runEngineSpecs},
+  {name: 'repeat', group: 'unit', run: runRepeatSpecs},
   {name: 'web', group: 'web', run: runWeb, alone: true},
   {name: 'e2e', group: 'e2e', run: runEndToEnd, alone: true},
 ];
@@ -55,6 +56,14 @@ function runServerSpecs(result) {
   ]);
 }
 
+/** Same document and log, same bits: in Node and two browsers, through the wire and the database. */
+function runRepeatSpecs(result) {
+  needPostgres();
+  needChromium();
+  needFirefox();
+  return runJasmine(result, ['test/repeat/**/*.spec.ts']);
+}
+
 async function runJasmine(result, globs) {
   const words = ['--import', 'tsx', 'tools/testing/jasmine.mjs', result, ...globs];
   return counted(await node(words), result);
@@ -88,6 +97,10 @@ async function runEndToEnd(result) {
 
 function needChromium() {
   if (!fs.existsSync('/usr/bin/chromium')) installPackages('Chromium', ['chromium']);
+}
+
+function needFirefox() {
+  if (!fs.existsSync('/usr/bin/firefox-esr')) installPackages('Firefox', ['firefox-esr']);
 }
 
 function needPostgres() {
