@@ -5,13 +5,14 @@ import {BYTES, liveLog, LIVELY} from '../../tools/testing/pinned-runs';
 import {type Browser, openChromium, openFirefox, serveProbe} from './support/browsers';
 import {put, type Document} from './support/paths';
 import {endOf, live, type Lived, type Plan, type Step} from './support/plans';
-import {randomPlan, richPlan} from './support/sessions';
+import {randomPlan, richPlan, shakenPlans} from './support/sessions';
 
 const REFERENCE = path.resolve(import.meta.dirname, '../../sim-core/reference');
 /** As many as hashes.spec.ts runs of each. */
 const TICKS = 4000;
 /** Sessions lived in every place, beside the reference cases. */
 const SESSIONS = 40;
+const SHAKEN = 30;
 const PLACES = ['page', 'worker'] as const;
 /** For a browser that starts on a machine that does other things too [ms]. */
 const PATIENCE_MS = 180_000;
@@ -55,6 +56,7 @@ describe('the engine', () => {
     ...referenceCases().map(noisy),
     richPlan(1),
     richPlan(3),
+    ...shakenPlans(SHAKEN),
     ...Array.from({length: SESSIONS}, (_, seed) => randomPlan(seed)),
   ];
   const json = JSON.stringify(plans);

@@ -8,9 +8,9 @@ import {
   settingsOf,
 } from '#sim-core/index';
 import {Draws} from './draws';
-import {at, type Document} from './paths';
+import {at, copyOf, type Document, put} from './paths';
 import {type Plan, type Step} from './plans';
-import {randomStand} from './stands';
+import {NONWOVEN, randomStand} from './stands';
 import {sensibleValue} from './values';
 
 /** Shortest and longest session [s], and most ticks run in one call: a page that was hidden for a while. */
@@ -51,6 +51,26 @@ export function richPlan(seed: number): Plan {
     steps.push({act}, {ticks: draws.whole(1, 60)});
   for (const note of NOTES) steps.push({note}, {ticks: draws.whole(1, 20)});
   return {name: `every live key, ${seed}`, document, steps};
+}
+
+/**
+ * Short runs in which a last bit of a sine, an exponential or a logarithm shows: all that turns is far out of round
+ * and a soft web keeps together, each with a lag of its own and a noisy cell.
+ */
+export function shakenPlans(count: number): Plan[] {
+  const draws = new Draws(count);
+  return Array.from({length: count}, (_, place): Plan => {
+    const document = copyOf(NONWOVEN);
+    put(document, 'seed', place);
+    put(document, 'roll.eccentricityM', draws.between(0.005, 0.03));
+    put(document, 'roll.ovalM', draws.between(0.001, 0.01));
+    put(document, 'span.rollerRunoutM', draws.between(0.005, 0.02));
+    put(document, 'brake.lagS', 0.002 * Math.pow(1.2, place));
+    put(document, 'sensing.noiseN', 10);
+    const disturb = {rippleMps: draws.between(0.1, 1), rippleHz: draws.between(1, 20)};
+    const steps = [{act: {disturb}}, {act: {line: runOf(draws)}}, {ticks: 600}];
+    return {name: `shaken ${place}`, document, steps};
+  });
 }
 
 const NOTES: readonly Extract<Step, {note: unknown}>['note'][] = [

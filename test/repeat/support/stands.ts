@@ -67,7 +67,7 @@ const PAPER: Scenario = {
 };
 
 /** A soft nonwoven without sensor filter, sampled each 5 ms, with a controller that counts the diameter. */
-const NONWOVEN: Scenario = {
+export const NONWOVEN: Scenario = {
   ...FILM,
   name: 'nonwoven',
   web: {
