@@ -1,5 +1,5 @@
 import * as z from 'zod';
-import {type Bounds, type Field, type PairBounds} from '#sim-core/scenario/fields';
+import {type Bounds, type Field, isPlainText, type PairBounds} from '#sim-core/scenario/fields';
 
 /** The last part of a field's path. */
 export function keyOf({path}: Field): string {
@@ -40,7 +40,7 @@ export function valueOf(field: Field): z.ZodType {
     case 'choice':
       return z.literal([...(field.choices ?? [])]);
     case 'text':
-      return z.string().min(lowest).max(highest);
+      return z.string().min(lowest).max(highest).refine(isPlainText, 'Must be plain text.');
     case 'whole':
       return z.int().min(lowest).max(highest);
     case 'number':

@@ -20,9 +20,9 @@ export function woundLength(n: Float64Array, radiusM: number): number {
   return (radiusM * radiusM - n[now.CORE_SQUARE]!) / n[now.PER_LENGTH]!;
 }
 
-/** Square of the mean radius [m²] of a roll that holds this relaxed length [m]. */
+/** Square of the mean radius [m²] of a roll that holds this relaxed length [m]; of one that ran out, the core's. */
 export function radiusSquare(n: Float64Array, lengthM: number): number {
-  return n[now.CORE_SQUARE]! + n[now.PER_LENGTH]! * lengthM;
+  return n[now.CORE_SQUARE]! + n[now.PER_LENGTH]! * Math.max(0, lengthM);
 }
 
 /** Inertia [kg·m²] at a mean radius squared [m²]. */

@@ -21,8 +21,8 @@ import * as run from './run-state';
 import {type TraceBlock} from './trace';
 import {type Watch} from './watch';
 
-/** A roll with less web than this may run out within a tick [m]. */
-const NEARLY_EMPTY_M = 5;
+/** A roll with less web than this, and twice what comes off it in a tick, may run out within one [m]. */
+const NEARLY_EMPTY_M = 1;
 
 /** What a run lends to its quiet ticks: the very arrays and objects that its careful ticks work with. */
 export interface QuietParts {
@@ -147,9 +147,9 @@ export class QuietTicks {
       if (!(c0 >= slowMps && c0 + sampleS * (c1 + sampleS * c2) >= slowMps)) break;
       const dancerM = p[at.DANCER]!;
       if (!(p[at.OMEGA]! > 0 && p[at.LENGTH]! < spanM + 2 * dancerM)) break;
-      if (!(p[at.WOUND]! > NEARLY_EMPTY_M)) break;
       if (hasDancer && !(dancerM > 0 && dancerM < travelM)) break;
       const radius = Math.sqrt(coreSquare + perLength * p[at.WOUND]!);
+      if (!(p[at.WOUND]! > NEARLY_EMPTY_M + 2 * p[at.OMEGA]! * radius * sampleS)) break;
 
       if (block !== undefined) writePlant(block, this.read, t);
 

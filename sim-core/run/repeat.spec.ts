@@ -233,6 +233,31 @@ describe('settings that no loop stands', () => {
   });
 });
 
+describe('a roll of thick web that runs out within one step', () => {
+  it('is empty, not lost in numbers', () => {
+    const run = startRun(
+      aScenario({
+        web: {thicknessM: 0.05, modulusPa: 1e6, densityKgM3: 1, breakNPerM: 1e7},
+        roll: {coreRadiusM: 0.005, radiusM: 5},
+        line: [{atS: 0.1, command: 'run', speedMps: 50, rampS: 0}],
+        actions: [{atS: 1.72, disturb: {radiusM: 0.00501}}],
+      }),
+    );
+    run.advance(400);
+
+    expect(run.outcome.kind).toBe('rollEmpty');
+  });
+});
+
+describe('a name', () => {
+  it('is plain text: no null character, no half of a pair, as a database takes neither', () => {
+    for (const name of ['a\0b', 'a\ud83db', '\udc00'])
+      expect(() => startRun({...aScenario(), name})).toThrowError(/name/);
+
+    expect(() => startRun({...aScenario(), name: 'Küche 5 – 🎯'})).not.toThrow();
+  });
+});
+
 describe('a tick', () => {
   // a web that is just loose on a line that just creeps bends in every step, and each was halved to the last
   it('ends within a bounded number of steps', () => {

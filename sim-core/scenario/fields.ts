@@ -9,6 +9,11 @@ export interface Bounds {
   readonly highest: number;
 }
 
+/** Whether a text can be stored and sent: no null character and no half of a surrogate pair. */
+export function isPlainText(text: string): boolean {
+  return !/\0|[\ud800-\udbff](?![\udc00-\udfff])|(?<![\ud800-\udbff])[\udc00-\udfff]/.test(text);
+}
+
 /** Points of a curve: range of each number and how many points there may be. */
 export interface PairBounds {
   readonly x: Bounds;

@@ -1,5 +1,5 @@
 import {type Fault} from './faults';
-import {type Bounds, type Field, type PairBounds} from './fields';
+import {type Bounds, type Field, isPlainText, type PairBounds} from './fields';
 
 /** A JSON object. */
 export type JsonObject = Readonly<Record<string, unknown>>;
@@ -47,7 +47,7 @@ export function fits(field: Field, value: unknown): boolean {
     case 'choice':
       return field.choices?.some((one) => one === value) ?? false;
     case 'text':
-      return typeof value === 'string' && within(value.length, bounds(field));
+      return typeof value === 'string' && within(value.length, bounds(field)) && isPlainText(value);
     case 'whole':
       return typeof value === 'number' && value % 1 === 0 && within(value, bounds(field));
     case 'number':

@@ -9,7 +9,6 @@ import {
 } from '#sim-core/index';
 import {Draws} from './draws';
 import {at, copyOf, type Document, isDocument, put, takeOut} from './paths';
-import {withoutCreeping} from './left-out';
 import {FAMILIES, randomStand} from './stands';
 import {allowedValue, sensibleValue, strangeValue, wrongValue} from './values';
 
@@ -105,7 +104,7 @@ function lineOf(draws: Draws, value: Value): Document[] {
     );
     const values = fields.map((field): readonly [string, unknown] => [
       field.path,
-      draws.chance(0.8) ? draws.between(0.05, 8) : withoutCreeping(field, value(draws, field)),
+      draws.chance(0.8) ? draws.between(0.05, 8) : value(draws, field),
     ]);
     return {atS: timeOf(draws, value), command, ...Object.fromEntries(values)};
   });

@@ -35,7 +35,7 @@ export function sensibleValue(draws: Draws, field: Field, present: unknown): unk
   if (typeof from !== 'number') throw new TypeError(`${field.path} is no number`);
   const isMany = from !== 0 && from !== lowest;
   const to = isMany ? from * Math.pow(2, draws.between(-1, 1)) : from + little(draws, field, from);
-  return Math.min(highest, Math.max(lowest, to)) + 0; // no −0: see left-out.ts
+  return Math.min(highest, Math.max(lowest, to));
 }
 
 /** What does not belong there: another type, just outside, no number at all. */
@@ -60,7 +60,9 @@ function nested(depth: number): unknown {
 
 /** Values that stand nowhere, or in the wrong place; made anew each time, as a document may be changed further. */
 const STRANGE: readonly (() => unknown)[] = [
-  ...[null, undefined, NaN, Infinity, -Infinity, -1, 0, 1e308, 1e-300].map((value) => () => value),
+  ...[null, undefined, NaN, Infinity, -Infinity, -1, 0, -0, 1e308, 1e-300, 5e-324].map(
+    (value) => () => value,
+  ),
   ...['', '5', 'run', 'true', true, false, 10n, Symbol('5')].map((value) => () => value),
   () => [],
   () => ({}),
