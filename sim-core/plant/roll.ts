@@ -20,14 +20,15 @@ export function woundLength(n: Float64Array, radiusM: number): number {
   return (radiusM * radiusM - n[now.CORE_SQUARE]!) / n[now.PER_LENGTH]!;
 }
 
-/** Square of the mean radius [m²] of a roll that holds this relaxed length [m]; of one that ran out, the core's. */
+/** Square of the mean radius [m²] of a roll that holds this relaxed length [m]; 0 far below an empty one. */
 export function radiusSquare(n: Float64Array, lengthM: number): number {
-  return n[now.CORE_SQUARE]! + n[now.PER_LENGTH]! * Math.max(0, lengthM);
+  return Math.max(0, n[now.CORE_SQUARE]! + n[now.PER_LENGTH]! * lengthM);
 }
 
-/** Inertia [kg·m²] at a mean radius squared [m²]. */
+/** Inertia [kg·m²] at a mean radius squared [m²]; never less than the core's. */
 export function inertia(n: Float64Array, squareM2: number): number {
-  return n[now.INERTIA_AT_ZERO]! + n[now.INERTIA_PER_FOURTH]! * (squareM2 * squareM2);
+  const square = Math.max(squareM2, n[now.CORE_SQUARE]!);
+  return n[now.INERTIA_AT_ZERO]! + n[now.INERTIA_PER_FOURTH]! * (square * square);
 }
 
 /** What an out-of-round roll adds to the mean radius [m], from the cosine of its angle. */

@@ -72,7 +72,7 @@ export const ERRORS = [
   {
     name: 'inertia with the cube of the radius',
     edits: [
-      ['sim-core/plant/roll.ts', '(squareM2 * squareM2)', '(squareM2 * Math.sqrt(squareM2))'],
+      ['sim-core/plant/roll.ts', '(square * square)', '(square * Math.sqrt(square))'],
       [MOVE, 'perFourth * square * square;', 'perFourth * square * radius;'],
     ],
   },

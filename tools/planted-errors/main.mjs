@@ -1,4 +1,4 @@
-// npm run planted-errors [-- WORD]: plants one error after the other in a copy of the engine and runs its specs there.
+// npm run test:planted [-- WORD]: plants one error after the other in a copy of the engine and runs its specs there.
 // Each must turn one red. Ends with 1 when one stays unnoticed, or when an edit finds nothing to change.
 import {spawnSync} from 'node:child_process';
 import fs from 'node:fs';
