@@ -115,17 +115,23 @@ export class QuietCell extends QuietPlant {
         let r1 = radius0 + radiusSlope * into;
         let r2 = radius0 + radiusSlope * middle;
         let r4 = radius0 + radiusSlope * end;
+        let bend2 = 0; // slope of the radius over the angle [m/rad]
+        let bend4 = 0;
         if (isOut) {
-          // the turn to middle and end as far as the speed at the start tells; the rest is of the third order
+          // the turn to middle and end at the speed of the start; what the stages add is small and goes along the slope
           r1 += eccentricity * cos + oval * (2 * cos * cos - 1);
           const a = half * omega;
           const aa = a * a;
           const near = 1 - (aa / 2) * (1 - aa / 12);
           const far = a * (1 - (aa / 6) * (1 - aa / 20));
-          const wave2 = cos * near - sin * far;
-          const wave4 = cos * (near * near - far * far) - sin * (2 * near * far);
-          r2 += eccentricity * wave2 + oval * (2 * wave2 * wave2 - 1);
-          r4 += eccentricity * wave4 + oval * (2 * wave4 * wave4 - 1);
+          const cos2 = cos * near - sin * far;
+          const sin2 = sin * near + cos * far;
+          const cos4 = cos2 * near - sin2 * far;
+          const sin4 = sin2 * near + cos2 * far;
+          r2 += eccentricity * cos2 + oval * (2 * cos2 * cos2 - 1);
+          r4 += eccentricity * cos4 + oval * (2 * cos4 * cos4 - 1);
+          bend2 = -sin2 * (eccentricity + 4 * oval * cos2);
+          bend4 = -sin4 * (eccentricity + 4 * oval * cos4);
         }
         if (extraGrip > 0) {
           const z = omega * perGripSpeed;
@@ -155,10 +161,11 @@ export class QuietCell extends QuietPlant {
           const z = omega3 * perGripSpeed;
           drag3 += (drag3 * extraGrip) / (1 + z * z);
         }
-        const paid3 = omega3 * (r2 * perWound);
+        const r3 = r2 + bend2 * half * (omega2 - omega);
+        const paid3 = omega3 * (r3 * perWound);
         const slope3 = s3 * speed2 - s3 * s3 * perSpan * paid3;
         const pull3 = stiffness * s3 - lost2 + lossNS * slope3;
-        const turn3 = perInertia * r2 * pull3 - (perInertia * (drag3 + coulomb) + slowed * omega3);
+        const turn3 = perInertia * r3 * pull3 - (perInertia * (drag3 + coulomb) + slowed * omega3);
 
         // stage 4
         const omega4 = omega + stepS * turn3;
@@ -167,6 +174,7 @@ export class QuietCell extends QuietPlant {
           const z = omega4 * perGripSpeed;
           drag4 += (drag4 * extraGrip) / (1 + z * z);
         }
+        r4 += bend4 * stepS * (omega3 - omega);
         const paid4 = omega4 * (r4 * perWound);
         const slope4 = s4 * speed4 - s4 * s4 * perSpan * paid4;
         const pull4 = stiffness * s4 - lost4 + lossNS * slope4;

@@ -112,17 +112,23 @@ export class QuietDancer extends QuietPlant {
         let r1 = radius0 + radiusSlope * into;
         let r2 = radius0 + radiusSlope * middle;
         let r4 = radius0 + radiusSlope * end;
+        let bend2 = 0; // slope of the radius over the angle [m/rad]
+        let bend4 = 0;
         if (isOut) {
-          // the turn to middle and end as far as the speed at the start tells; the rest is of the third order
+          // the turn to middle and end at the speed of the start; what the stages add is small and goes along the slope
           r1 += eccentricity * cos + oval * (2 * cos * cos - 1);
           const a = half * omega;
           const aa = a * a;
           const near = 1 - (aa / 2) * (1 - aa / 12);
           const far = a * (1 - (aa / 6) * (1 - aa / 20));
-          const wave2 = cos * near - sin * far;
-          const wave4 = cos * (near * near - far * far) - sin * (2 * near * far);
-          r2 += eccentricity * wave2 + oval * (2 * wave2 * wave2 - 1);
-          r4 += eccentricity * wave4 + oval * (2 * wave4 * wave4 - 1);
+          const cos2 = cos * near - sin * far;
+          const sin2 = sin * near + cos * far;
+          const cos4 = cos2 * near - sin2 * far;
+          const sin4 = sin2 * near + cos2 * far;
+          r2 += eccentricity * cos2 + oval * (2 * cos2 * cos2 - 1);
+          r4 += eccentricity * cos4 + oval * (2 * cos4 * cos4 - 1);
+          bend2 = -sin2 * (eccentricity + 4 * oval * cos2);
+          bend4 = -sin4 * (eccentricity + 4 * oval * cos4);
         }
         if (extraGrip > 0) {
           const z = omega * perGripSpeed;
@@ -159,12 +165,13 @@ export class QuietDancer extends QuietPlant {
           const z = omega3 * perGripSpeed;
           drag3 += (drag3 * extraGrip) / (1 + z * z);
         }
-        const paid3 = omega3 * (r2 * perWound);
+        const r3 = r2 + bend2 * half * (omega2 - omega);
+        const paid3 = omega3 * (r3 * perWound);
         const dancerSpeed3 = dancerSpeed + half * push2;
         perPath = 1 / (spanM + 2 * (dancer + half * dancerSpeed2));
         const slope3 = s3 * perPath * (v2 + 2 * dancerSpeed3) - s3 * s3 * perPath * paid3;
         const pull3 = stiffness * s3 - lost2 + lossNS * slope3;
-        const turn3 = perInertia * r2 * pull3 - (perInertia * (drag3 + coulomb) + slowed * omega3);
+        const turn3 = perInertia * r3 * pull3 - (perInertia * (drag3 + coulomb) + slowed * omega3);
         const push3 =
           perMass * (2 * (loadingN - (pull3 + (lost2 - stiffness))) - damping * dancerSpeed3);
 
@@ -175,6 +182,7 @@ export class QuietDancer extends QuietPlant {
           const z = omega4 * perGripSpeed;
           drag4 += (drag4 * extraGrip) / (1 + z * z);
         }
+        r4 += bend4 * stepS * (omega3 - omega);
         const paid4 = omega4 * (r4 * perWound);
         const dancerSpeed4 = dancerSpeed + stepS * push3;
         perPath = 1 / (spanM + 2 * (dancer + stepS * dancerSpeed3));

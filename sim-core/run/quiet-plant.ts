@@ -39,6 +39,7 @@ export abstract class QuietPlant {
   protected readonly curve: Points;
   protected readonly drive: Drive;
   protected readonly sampleS: number;
+  private readonly rad: number;
 
   /** `p` is the plant's part of the run's state. */
   constructor(
@@ -51,6 +52,7 @@ export abstract class QuietPlant {
     this.now = plant.equations.now;
     this.curve = plant.equations.curve;
     this.sampleS = grid.sampleS;
+    this.rad = QUIET_RAD[scenario.sensing.kind];
     this.steps = new QuietSteps(scenario, grid, plant.drive.changesAtStep);
   }
 
@@ -82,7 +84,7 @@ export abstract class QuietPlant {
     // how finely: (step × natural frequency)², and shares of what decays, for one step in the tick
     const perSpan = n[now.STIFFNESS]! * n[now.PER_SPAN]! * sampleS;
     const yields = square * perInertia + 4 * n[now.PER_MASS]!; // [1/kg]
-    const swing = (perSpan * sampleS * yields) / (QUIET_RAD * QUIET_RAD);
+    const swing = (perSpan * sampleS * yields) / (this.rad * this.rad);
     const loss = perSpan * n[now.LOSS_S]! * yields + n[now.DAMPING]! * n[now.PER_MASS]! * sampleS;
     const torque = n[now.RESIDUAL]! + n[now.TORQUE_SPAN]!;
     const fall = torque * n[now.EXTRA_GRIP]! * n[now.PER_GRIP_SPEED]! * perInertia * sampleS;
@@ -92,7 +94,7 @@ export abstract class QuietPlant {
       fine * fine < swing ||
       fine * QUIET_SHARE < loss ||
       fine * QUIET_SHARE < fall ||
-      fine * QUIET_RAD < turn
+      fine * this.rad < turn
     )
       fine++;
     made[FINE] = fine;

@@ -4,14 +4,14 @@ import {ceiling} from '../plant/stiffness';
 import {type Scenario} from '../scenario/scenario';
 import {decay} from '../signal/decay';
 
-/** Greatest turn in a step of whatever vibrates or turns [rad]. */
-export const QUIET_RAD = 0.2;
+/** Greatest turn in a step of whatever vibrates or turns [rad]; a dancer's quick vibration dies out sooner. */
+export const QUIET_RAD = {loadCell: 0.14, dancer: 0.2};
 
 /** A step is this share of a lag, or of the time in which something decays, at most. */
 export const QUIET_SHARE = 0.5;
 
 /** Longest step [s]. */
-const LONGEST_S = 0.005;
+const LONGEST_S = 0.0034;
 
 /** Finest division of a quiet tick. */
 export const MOST_STEPS = 32;
