@@ -35,7 +35,7 @@ describe('the sampled controller', () => {
     gain: 2,
     tiS: 10,
     tdS: 1,
-    weight: 0.8,
+    setPointWeight: 0.8,
     trackingS: Math.sqrt(10),
     integralPct: 50,
   };

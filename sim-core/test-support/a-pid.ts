@@ -7,10 +7,11 @@ import * as set from '../control/tuning';
 /** Settings of a PID by itself, in % of output and % of range. */
 export interface PidSettings {
   readonly sampleS: number;
+  /** [%/%] */
   readonly gain: number;
   readonly tiS?: number;
   readonly tdS?: number;
-  readonly weight?: number;
+  readonly setPointWeight?: number;
   /** Back-calculation with this time [s]; none: no anti-windup. */
   readonly trackingS?: number;
   /** Integral part it starts with [%]. */
@@ -21,7 +22,15 @@ export interface PidSettings {
 
 /** The engine's PID with its loop closed already; `tick` gives it set point and measurement [%]. */
 export function aClosedPid(settings: PidSettings) {
-  const {gain, tiS = 0, tdS = 0, weight = 1, trackingS, integralPct, lastPct = 0} = settings;
+  const {
+    gain,
+    tiS = 0,
+    tdS = 0,
+    setPointWeight = 1,
+    trackingS,
+    integralPct,
+    lastPct = 0,
+  } = settings;
   const state = new Float64Array(at.CONTROLLER_SIZE);
   const tuning = new Float64Array(set.TUNING_SIZE);
   const news = new Float64Array(seen.SEEN_SIZE);
@@ -29,7 +38,7 @@ export function aClosedPid(settings: PidSettings) {
   tuning[set.TI] = tiS;
   tuning[set.TD] = tdS;
   tuning[set.DERIVATIVE_N] = 10;
-  tuning[set.WEIGHT] = weight;
+  tuning[set.WEIGHT] = setPointWeight;
   tuning[set.OUT_MAX] = 100;
   tuning[set.WINDUP] = trackingS === undefined ? set.NO_ANTI_WINDUP : set.BACK_CALCULATION;
   tuning[set.TRACKING_S] = trackingS ?? NaN;
