@@ -3,7 +3,7 @@ import * as place from '../plant/plant-state';
 import {aPlant, linearised} from '../test-support/a-plant';
 import {plainRefA, refA, withHeldRadius} from '../test-support/ref-a';
 import {record} from '../test-support/record';
-import {expectNear, expectWithin} from '../test-support/within';
+import {near, within} from '../test-support/within';
 
 const STAND_S = 1e-9;
 
@@ -27,7 +27,7 @@ describe('the brake', () => {
     });
 
     // it begins with a start of 0.1 s, hence 1e-3 and not less
-    expectWithin(record(scenario, 600).at(600, 'brakeC') - 25, 33.04, 1e-3);
+    expect(record(scenario, 600).at(600, 'brakeC') - 25).toEqual(within(33.04, 1e-3));
   });
 
   it('goes to 60 K in 750 s time constant at 400 W (handbook M 30; A, C-10)', () => {
@@ -41,9 +41,9 @@ describe('the brake', () => {
       return slopes(moved, torqueNm).slope[place.HEAT]!;
     };
 
-    expectWithin(60 + heatSlope(60) * 750, 60, 1e-3);
+    expect(60 + heatSlope(60) * 750).toEqual(within(60, 1e-3));
     expect(heatSlope(60)).toBeCloseTo(0, 9);
-    expectWithin(50 / (heatSlope(0) - heatSlope(50)), 750, 1e-3);
+    expect(50 / (heatSlope(0) - heatSlope(50))).toEqual(within(750, 1e-3));
   });
 
   for (const [radiusM, expected] of [
@@ -55,7 +55,7 @@ describe('the brake', () => {
         refA({roll: {radiusM}, controller: {mode: 'manual', manualPct: 0}}),
       );
 
-      expectWithin(record(scenario, 30).at(30, 'tensionN'), expected, 1e-3);
+      expect(record(scenario, 30).at(30, 'tensionN')).toEqual(within(expected, 1e-3));
     });
 
   it('swings up below −328.9 N·m·s of negative damping (handbook M 32; A, C-7)', () => {
@@ -67,7 +67,7 @@ describe('the brake', () => {
     const slope = (growth(0) - growth(-300)) / 300;
     const limit = -growth(0) / slope;
 
-    expectWithin(limit, -328.9, 5e-3);
+    expect(limit).toEqual(within(-328.9, 5e-3));
     expect(growth(1.005 * -328.9)).toBeGreaterThan(0);
     expect(growth(0.995 * -328.9)).toBeLessThan(0);
     const point = {
@@ -81,7 +81,7 @@ describe('the brake', () => {
       lossTimeS: 0.005,
       viscousNmS: 0,
     };
-    expectWithin(leastViscousNmS(point), -328.9, 5e-3);
+    expect(leastViscousNmS(point)).toEqual(within(-328.9, 5e-3));
   });
 
   it('lags: after one tick of 10 ms a lag of 0.1 s keeps 0.904837 (handbook M 81; A)', () => {
@@ -92,7 +92,7 @@ describe('the brake', () => {
     });
     const {at} = record(scenario, 0.02);
 
-    expectNear(at(0, 'torqueNm'), 100, STAND_S);
-    expectNear((150 - at(0.01, 'torqueNm')) / 50, 0.904837, 1e-6);
+    expect(at(0, 'torqueNm')).toEqual(near(100, STAND_S));
+    expect((150 - at(0.01, 'torqueNm')) / 50).toEqual(near(0.904837, 1e-6));
   });
 });

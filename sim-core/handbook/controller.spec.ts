@@ -11,7 +11,7 @@ import {aClosedPid, runLoop} from '../test-support/a-pid';
 import {amplitudeOf} from '../test-support/curves';
 import {plainRefA} from '../test-support/ref-a';
 import {record} from '../test-support/record';
-import {expectNear} from '../test-support/within';
+import {near} from '../test-support/within';
 
 // Numbers of table M of the project's handbook; A: closed form, P: worked out in Python.
 describe('forms of the controller', () => {
@@ -19,12 +19,12 @@ describe('forms of the controller', () => {
     const standard = seriesToStandard({gain: 2, integralS: 10, derivativeS: 2});
     const back = standardToSeries(standard)!;
 
-    expectNear(standard.gain, 2.4, 1e-6);
-    expectNear(standard.integralS, 12, 1e-6);
-    expectNear(standard.derivativeS, 5 / 3, 1e-6);
-    expectNear(back.gain, 2, 1e-6);
-    expectNear(back.integralS, 10, 1e-6);
-    expectNear(back.derivativeS, 2, 1e-6);
+    expect(standard.gain).toEqual(near(2.4, 1e-6));
+    expect(standard.integralS).toEqual(near(12, 1e-6));
+    expect(standard.derivativeS).toEqual(near(5 / 3, 1e-6));
+    expect(back.gain).toEqual(near(2, 1e-6));
+    expect(back.integralS).toEqual(near(10, 1e-6));
+    expect(back.derivativeS).toEqual(near(2, 1e-6));
     expect(parallelToStandard(standardToParallel(standard))).toEqual(standard);
   });
 });
@@ -51,7 +51,7 @@ describe('the sampled controller', () => {
       [2, 55.24],
       [2, 59.15],
     ].forEach(([measured, output]) => {
-      expectNear(pid.tick(10, measured!), output!, 1e-6);
+      expect(pid.tick(10, measured!)).toEqual(near(output!, 1e-6));
     });
   });
 
@@ -60,7 +60,7 @@ describe('the sampled controller', () => {
 
     for (const wanted of [146, 145.745352, 145.498757, 145.25996, 145.028715]) {
       // before its limit: P = Kc·b·r = 96, no D, and the integral of the tick before
-      expectNear(96 + pid.integralPct()!, wanted, 1e-6);
+      expect(96 + pid.integralPct()!).toEqual(near(wanted, 1e-6));
       expect(pid.tick(60, 0)).toBe(100);
     }
   });
@@ -69,11 +69,11 @@ describe('the sampled controller', () => {
     const loop = {process: firstOrderLag(2, 10), deadTimeS: 0, gain: 3, tiS: 0, setPoint: 1};
     const {y} = runLoop({...loop, sampleS: 0.01, lengthS: 30});
 
-    expectNear(100 * (1 - y.at(-1)!), 14.286, 0.01);
+    expect(100 * (1 - y.at(-1)!)).toEqual(near(14.286, 0.01));
   });
 
   it('sees 6.3662 Hz at 10 samples a second as 3.634 Hz (handbook M 80; A)', () => {
-    expectNear(aliasHz(6.3662, 10), 3.634, 0.01);
+    expect(aliasHz(6.3662, 10)).toEqual(near(3.634, 0.01));
 
     // the engine: a roll that turns 6.3662 times a second, out of round, seen in ticks of 0.1 s for 100 s
     const speedMps = 2 * Math.PI * 0.5 * 6.3662;
@@ -89,14 +89,14 @@ describe('the sampled controller', () => {
     const amplitudes = Array.from({length: 499}, (_, i) => amplitudeOf(seen, i + 1));
     const strongest = amplitudes.indexOf(Math.max(...amplitudes)) + 1;
 
-    expectNear(at(220, 'rollRadps') / (2 * Math.PI), 6.3662, 2e-3);
-    expectNear(strongest / 100, 3.634, 0.01);
+    expect(at(220, 'rollRadps') / (2 * Math.PI)).toEqual(near(6.3662, 2e-3));
+    expect(strongest / 100).toEqual(near(3.634, 0.01));
   });
 
   it('meets a lag of 0.1 s in ticks of 10 ms as a = 0.904837 (handbook M 81; A)', () => {
     const {a, b} = sampled(firstOrderLag(1, 0.1), 0.01);
 
-    expectNear(a.get(0, 0), 0.904837, 1e-6);
-    expectNear(b.get(0, 0), 1 - 0.904837, 1e-6);
+    expect(a.get(0, 0)).toEqual(near(0.904837, 1e-6));
+    expect(b.get(0, 0)).toEqual(near(1 - 0.904837, 1e-6));
   });
 });

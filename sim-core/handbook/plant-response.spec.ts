@@ -3,7 +3,7 @@ import {aPlant, linearised, type Linearised} from '../test-support/a-plant';
 import {amplitudeOf, meanOf, peaksOf} from '../test-support/curves';
 import {plainRefA} from '../test-support/ref-a';
 import {record, type Recorded} from '../test-support/record';
-import {expectNear, expectWithin} from '../test-support/within';
+import {near, within} from '../test-support/within';
 
 /** Runs to this speed and has come to rest in it at SETTLED_S. */
 const RUN = {atS: 0, command: 'run', speedMps: 2, rampS: 10} as const;
@@ -39,10 +39,10 @@ describe('roll and span', () => {
     // F-8 leaves strain out: 2 N here; at 200 N the frequency is 0.05 % higher, see effectiveStiffnessN
     const mode = modeOf(linearised(aPlant(plainRefA(), {tensionN: 2, lineMps: 2})));
 
-    expectWithin(mode.naturalRadps, 25.169, 5e-4);
-    expectWithin(mode.dampingFactor, 0.08279, 5e-4);
-    expectWithin(unwindMode(FULL).naturalRadps, 25.169, 5e-4);
-    expectWithin(unwindMode(FULL).dampingFactor, 0.08279, 5e-4);
+    expect(mode.naturalRadps).toEqual(within(25.169, 5e-4));
+    expect(mode.dampingFactor).toEqual(within(0.08279, 5e-4));
+    expect(unwindMode(FULL).naturalRadps).toEqual(within(25.169, 5e-4));
+    expect(unwindMode(FULL).dampingFactor).toEqual(within(0.08279, 5e-4));
   });
 
   it('answer +10 N·m of brake: +20.00 N, peak 35.53 N at 0.1202 s, period 0.2504 s (handbook M 14; P, O, N)', () => {
@@ -52,11 +52,11 @@ describe('roll and span', () => {
     const swing = tensions(recorded, SETTLED_S, SETTLED_S + 2).map((tension) => tension - before);
     const [first, second] = peaksOf(swing);
 
-    expectNear(before, 200, 1e-3);
-    expectWithin(recorded.at(SETTLED_S + 15, 'tensionN') - before, 20, 3e-3);
-    expectWithin(first!.value, 35.53, 3e-3);
-    expectWithin(first!.at * ROW_S, 0.1202, 3e-3);
-    expectWithin((second!.at - first!.at) * ROW_S, 0.2504, 3e-3);
+    expect(before).toEqual(near(200, 1e-3));
+    expect(recorded.at(SETTLED_S + 15, 'tensionN') - before).toEqual(within(20, 3e-3));
+    expect(first!.value).toEqual(within(35.53, 3e-3));
+    expect(first!.at * ROW_S).toEqual(within(0.1202, 3e-3));
+    expect((second!.at - first!.at) * ROW_S).toEqual(within(0.2504, 3e-3));
   });
 
   it('give 20 N per N·m at R 0.05 m, 19.998 with b 0.05 (handbook M 15; A, F-7)', () => {
@@ -71,18 +71,18 @@ describe('roll and span', () => {
       return c[0]![0]! * omega + c[0]![2]! * length;
     };
 
-    expectWithin(gain(0), 20, 1e-6);
-    expectWithin(gain(0.05), 19.998, 1e-5);
+    expect(gain(0)).toEqual(within(20, 1e-6));
+    expect(gain(0.05)).toEqual(within(19.998, 1e-5));
     const atCore = {...FULL, radiusM: 0.05, inertiaKgM2: 0.4};
-    expectWithin(unwindMode(atCore).gainNPerNm, 20, 1e-9);
-    expectWithin(unwindMode({...atCore, viscousNmS: 0.05}).gainNPerNm, 19.998, 1e-5);
+    expect(unwindMode(atCore).gainNPerNm).toEqual(within(20, 1e-9));
+    expect(unwindMode({...atCore, viscousNmS: 0.05}).gainNPerNm).toEqual(within(19.998, 1e-5));
   });
 
   it('are at 357.86 N while the line speeds up by 0.5 m/s² (handbook M 20; A; N 357.72)', () => {
     const faster = {atS: SETTLED_S, command: 'run', speedMps: 7, rampS: 10} as const;
     const recorded = record(plainRefA({line: [RUN, faster]}), SETTLED_S + 10);
 
-    expectWithin(meanOf(tensions(recorded, SETTLED_S + 5, SETTLED_S + 10)), 357.86, 2e-3);
+    expect(meanOf(tensions(recorded, SETTLED_S + 5, SETTLED_S + 10))).toEqual(within(357.86, 2e-3));
   });
 
   it('are at 42.14 N while it slows down by 0.5 m/s², and slack at first (handbook M 21; A; N 42.06)', () => {
@@ -91,14 +91,14 @@ describe('roll and span', () => {
 
     expect(Math.min(...tensions(recorded, SETTLED_S, SETTLED_S + 0.5))).toBe(0);
     // four whole periods of the swing before the ramp ends
-    expectNear(meanOf(tensions(recorded, SETTLED_S + 3, SETTLED_S + 4)), 42.14, 0.3);
+    expect(meanOf(tensions(recorded, SETTLED_S + 3, SETTLED_S + 4))).toEqual(near(42.14, 0.3));
   });
 
   it('peak at 496 N in an abrupt start from rest at 190 N (handbook M 22; N)', () => {
     const line = [{atS: 0.5, command: 'run', speedMps: 2, rampS: 4}] as const;
     const recorded = record(plainRefA({initialTensionN: 190, line}), 4.5);
 
-    expectWithin(Math.max(...recorded.column('tensionN')), 496, 0.02);
+    expect(Math.max(...recorded.column('tensionN'))).toEqual(within(496, 0.02));
   });
 
   it('go slack beyond 0.6335 m/s² (handbook M 23; A)', () => {
@@ -111,7 +111,7 @@ describe('roll and span', () => {
     const gentle = stopAt(0.5);
     const mean = meanOf(tensions(gentle, SETTLED_S + 6, SETTLED_S + 10));
 
-    expectWithin(0.5 / (1 - mean / 200), 0.6335, 1e-3);
+    expect(0.5 / (1 - mean / 200)).toEqual(within(0.6335, 1e-3));
     expect(Math.min(...gentle.column('tensionN'))).toBeGreaterThan(0);
     expect(Math.min(...stopAt(0.61).column('tensionN'))).toBeGreaterThan(0);
     expect(Math.min(...stopAt(0.66).column('tensionN'))).toBe(0);
@@ -125,11 +125,11 @@ describe('roll and span', () => {
       const stop = {atS: SETTLED_S, command: 'stop', rampS: 2 / mps2} as const;
       const {column} = record(plainRefA({line: [RUN, stop]}), SETTLED_S + 5);
 
-      expectWithin(Math.max(...column('slackM')), simulated, 0.02);
+      expect(Math.max(...column('slackM'))).toEqual(within(simulated, 0.02));
       // B-14 on the engine's own roll: the surface slows by M·R/J
       const {inertiaKgM2} = aPlant(plainRefA(), {tensionN: 200, lineMps: 2});
       const runsOn = (2 * 2 * inertiaKgM2) / (2 * 100 * 0.5);
-      expectNear(runsOn - (2 * 2) / (2 * mps2), formula, 1e-3);
+      expect(runsOn - (2 * 2) / (2 * mps2)).toEqual(near(formula, 1e-3));
     });
 
   it('keep their web with M + J·a/R during the stop (handbook M 26; N)', () => {
@@ -159,7 +159,7 @@ describe('roll and span', () => {
       const fourTurnsS = (4 * 2 * Math.PI * 0.5) / speedMps;
       const rows = tensions(recorded, 40 - fourTurnsS, 40).slice(1);
 
-      expectWithin(amplitudeOf(rows, 4), expected, 0.01);
+      expect(amplitudeOf(rows, 4)).toEqual(within(expected, 0.01));
     });
 
   for (const [radiusM, expected] of [
@@ -170,6 +170,6 @@ describe('roll and span', () => {
     it(`meet their resonance at ${expected} m/s with R ${radiusM} m (handbook M 38; A, E-7)`, () => {
       const stand = aPlant(plainRefA({roll: {radiusM}}), {tensionN: 2, lineMps: 2});
 
-      expectWithin(modeOf(linearised(stand)).naturalRadps * radiusM, expected, 5e-3);
+      expect(modeOf(linearised(stand)).naturalRadps * radiusM).toEqual(within(expected, 5e-3));
     });
 });

@@ -13,7 +13,7 @@ import {type PidLoop, runLoop} from '../test-support/a-pid';
 import {integralOf, peaksOf} from '../test-support/curves';
 import {plainRefA} from '../test-support/ref-a';
 import {record} from '../test-support/record';
-import {expectNear, expectWithin} from '../test-support/within';
+import {near, within} from '../test-support/within';
 
 const SAMPLE_S = 0.005; // of loops that the handbook reckons without sampling
 const FOPDT = {process: firstOrderLag(1, 10), deadTimeS: 2, gain: 2.5, tiS: 10};
@@ -39,16 +39,16 @@ function measured(loop: Omit<PidLoop, 'sampleS'>) {
 // Numbers of table M of the project's handbook. A: closed form; P, O: Python and Octave, without sampling.
 describe('the engine’s PI on a lag with dead time', () => {
   it('leaves an error integral of Ti/Kc = 4.000 after a load step (handbook M 69; A, P)', () => {
-    expectWithin(-measured({...FOPDT, load: 1, lengthS: 120}).errorIntegral, 4, 1e-3);
+    expect(-measured({...FOPDT, load: 1, lengthS: 120}).errorIntegral).toEqual(within(4, 1e-3));
   });
 
   it('answers a set-point step: 4.06 %, IAE 4.338, TV 5.16, peak at 9.48 s (handbook M 70; P, O)', () => {
     const step = measured({...FOPDT, setPoint: 1, lengthS: 100});
 
-    expectWithin(step.overshootPct, 4.06, 0.01);
-    expectWithin(step.absoluteIntegral, 4.338, 0.01);
-    expectWithin(step.movement, 5.16, 0.01);
-    expectWithin(step.peakS, 9.48, 0.01);
+    expect(step.overshootPct).toEqual(within(4.06, 0.01));
+    expect(step.absoluteIntegral).toEqual(within(4.338, 0.01));
+    expect(step.movement).toEqual(within(5.16, 0.01));
+    expect(step.peakS).toEqual(within(9.48, 0.01));
   });
 });
 
@@ -56,15 +56,15 @@ describe('the engine’s PI on an integrator with dead time', () => {
   it('answers a set-point step: 27.76 %, IAE 3.923 (handbook M 71; P, O)', () => {
     const step = measured({...IPDT, setPoint: 1, lengthS: 100});
 
-    expectWithin(step.overshootPct, 27.76, 0.01);
-    expectWithin(step.absoluteIntegral, 3.923, 0.01);
+    expect(step.overshootPct).toEqual(within(27.76, 0.01));
+    expect(step.absoluteIntegral).toEqual(within(3.923, 0.01));
   });
 
   it('answers a load step: peak 1.962, IAE 16.00 (handbook M 71; P, O)', () => {
     const load = measured({...IPDT, load: 1, lengthS: 150});
 
-    expectWithin(load.peak, 1.962, 0.01);
-    expectWithin(load.absoluteIntegral, 16, 0.01);
+    expect(load.peak).toEqual(within(1.962, 0.01));
+    expect(load.absoluteIntegral).toEqual(within(16, 0.01));
   });
 });
 
@@ -75,13 +75,13 @@ describe('a second-order system', () => {
     [0.2, 52.66],
   ] as const)
     it(`overshoots by ${expected} % at ζ ${damping} (handbook M 72; A)`, () => {
-      expectNear(overshootOfDamping(damping), expected, 0.01);
+      expect(overshootOfDamping(damping)).toEqual(near(expected, 0.01));
     });
 
   it('decays to a quarter at ζ 0.21545, 50 % overshoot (handbook M 73; A)', () => {
-    expectNear(dampingOfDecayRatio(0.25), 0.21545, 1e-4);
-    expectNear(decayRatioOfDamping(0.21545), 0.25, 1e-4);
-    expectNear(overshootOfDamping(dampingOfDecayRatio(0.25)), 50, 1e-4);
+    expect(dampingOfDecayRatio(0.25)).toEqual(near(0.21545, 1e-4));
+    expect(decayRatioOfDamping(0.21545)).toEqual(near(0.25, 1e-4));
+    expect(overshootOfDamping(dampingOfDecayRatio(0.25))).toEqual(near(50, 1e-4));
   });
 });
 
@@ -109,7 +109,7 @@ describe('the loop on a ramp', () => {
       .slice(2000, 2901)
       .map((tension) => tension - 200);
 
-    expectNear(at(20, 'tensionN'), 200, 0.01);
-    expectWithin(integralOf(errors, 0.01), 5.472, 0.01);
+    expect(at(20, 'tensionN')).toEqual(near(200, 0.01));
+    expect(integralOf(errors, 0.01)).toEqual(within(5.472, 0.01));
   });
 });

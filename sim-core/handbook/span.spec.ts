@@ -9,7 +9,7 @@ import * as place from '../plant/plant-state';
 import {aPlant, type APlant} from '../test-support/a-plant';
 import {plainRefA} from '../test-support/ref-a';
 import {record} from '../test-support/record';
-import {expectNear, expectWithin} from '../test-support/within';
+import {near, within} from '../test-support/within';
 
 const WOUND_100 = plainRefA({web: {lossTimeS: 0}, roll: {woundTensionN: 100}});
 const POINT = {stiffnessN: 4e5, spanM: 2, enteringN: 100, enteringMps: 2, leavingMps: 2.001};
@@ -48,30 +48,30 @@ describe('the span', () => {
     // the brake holds more than the web pulls
     const {at} = record(plainRefA({line: [], controller: {manualPct: 60}}), 10);
 
-    expectNear(at(10, 'tensionN'), 200, 1e-9);
+    expect(at(10, 'tensionN')).toEqual(near(200, 1e-9));
     expect(linearTensionAfter({...POINT, enteringMps: 0, leavingMps: 0}, 200, 100)).toBe(200);
   });
 
   it('comes to 300.050 N exactly, 299.850 N linear, from 2 to 2.001 m/s (handbook M 17; A, A-7, A-8)', () => {
-    expectNear(steadyTension(2, 2.001), 300.05, 1e-3);
-    expectNear(exactSteadyN(POINT), 300.05, 1e-3);
-    expectNear(linearSteadyN(POINT), 299.85, 1e-3);
+    expect(steadyTension(2, 2.001)).toEqual(near(300.05, 1e-3));
+    expect(exactSteadyN(POINT)).toEqual(near(300.05, 1e-3));
+    expect(linearSteadyN(POINT)).toEqual(near(299.85, 1e-3));
   });
 
   it('needs 2.0005002501 m/s for 200 N in the linear form (handbook M 18; A)', () => {
     const leavingMps = leavingSpeedFor(200, POINT);
 
-    expectNear(leavingMps, 2.0005002501, 1e-9);
+    expect(leavingMps).toEqual(near(2.0005002501, 1e-9));
     // the engine's exact span differs from it by the size of its strain, 5e-4
-    expectWithin(steadyTension(2, leavingMps), 200, 5e-4);
+    expect(steadyTension(2, leavingMps)).toEqual(within(200, 5e-4));
   });
 
   it('goes from 200 N to 263.167 N in 1 s and to 299.900 N, linear (handbook M 19; A)', () => {
     const point = {...POINT, leavingMps: leavingSpeedFor(200, POINT) + 0.0005};
 
-    expectNear(linearTensionAfter(point, 200, 1), 263.167, 0.01);
-    expectNear(linearSteadyN(point), 299.9, 0.01);
-    expectWithin(steadyTension(2, point.leavingMps), 299.9, 1e-3); // by its strain, 7.5e-4
+    expect(linearTensionAfter(point, 200, 1)).toEqual(near(263.167, 0.01));
+    expect(linearSteadyN(point)).toEqual(near(299.9, 0.01));
+    expect(steadyTension(2, point.leavingMps)).toEqual(within(299.9, 1e-3)); // by its strain, 7.5e-4
   });
 
   it('tightens at 2000 N/s when the nip is 0.01 m/s faster (handbook M 39; A)', () => {
@@ -82,7 +82,7 @@ describe('the span', () => {
     stand.y[place.OMEGA] = stand.y[place.OMEGA]! * (2 / 2.01);
     const slope = (-4e5 * 2 * lengthSlope(stand, lengthM)) / (lengthM * lengthM);
 
-    expectWithin(slope, 2000, 1e-8);
+    expect(slope).toEqual(within(2000, 1e-8));
   });
 
   it('tightens so in its first milliseconds, in a run at 200 N (handbook M 39; A)', () => {
@@ -93,6 +93,6 @@ describe('the span', () => {
     const {at} = record(plainRefA({web: {lossTimeS: 0}, line}), 40.01);
 
     // after 1 ms the roll has followed by (ωn·t)²/6 = 1e-4 and the nip carried off v·t/2L = 5e-4; strain adds 5e-4
-    expectWithin((at(40.001, 'tensionN') - at(40, 'tensionN')) / 0.001, 2000, 1e-3);
+    expect((at(40.001, 'tensionN') - at(40, 'tensionN')) / 0.001).toEqual(within(2000, 1e-3));
   });
 });

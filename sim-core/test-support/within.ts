@@ -1,14 +1,19 @@
-/** Expects a value within a share of the expected one (0.001: 0.1 %), as a table of tolerances gives it. */
-export function expectWithin(value: number, expected: number, share: number): void {
-  const context = `${value} against ${expected}, ${(100 * (value / expected - 1)).toPrecision(3)} % off`;
-  expect(Math.abs(value - expected))
-    .withContext(context)
-    .toBeLessThanOrEqual(share * Math.abs(expected));
+/** A value within a share of the expected one (0.001: 0.1 %), as a table of tolerances gives it; for toEqual. */
+export function within(expected: number, share: number): number {
+  return matcher(expected, share * Math.abs(expected), `within ${100 * share} % of ${expected}`);
 }
 
-/** Expects a value within an amount of the expected one. */
-export function expectNear(value: number, expected: number, amount: number): void {
-  expect(Math.abs(value - expected))
-    .withContext(`${value} against ${expected}`)
-    .toBeLessThanOrEqual(amount);
+/** A value within an amount of the expected one; for toEqual. */
+export function near(expected: number, amount: number): number {
+  return matcher(expected, amount, `within ${amount} of ${expected}`);
+}
+
+/** What jasmine calls an asymmetric matcher; it stands where a number is expected. */
+function matcher(expected: number, amount: number, text: string): number {
+  const asymmetric = {
+    asymmetricMatch: (value: unknown): boolean =>
+      typeof value === 'number' && Math.abs(value - expected) <= amount,
+    jasmineToString: (): string => text,
+  };
+  return asymmetric as unknown as number;
 }
