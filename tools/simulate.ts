@@ -1,16 +1,22 @@
-// npm run -s simulate -- FILE.json [--every 0.01] [--out FILE.csv] [--events FILE] [--hash]
-// Runs one scenario document. Rows go to standard output without --out. --hash writes the fingerprint after
-// durationS to standard error. Ends with 2 and one line on wrong input, with 1 when a state diverged.
+// npm run -s simulate -- FILE.json [--set controller.kp=0.2] [--every 0.01] [--out FILE.csv] [--events FILE]
+//   [--measures FILE] [--hash]
+// Runs one scenario document, with values changed by --set. Rows go to standard output without --out. --hash writes
+// the fingerprint after durationS to standard error. Ends with 2 and one line on wrong input, with 1 when a state
+// diverged.
 import fs from 'node:fs';
 import {parseArgs} from 'node:util';
 import {
   PHASES,
   type Run,
+  type Scenario,
   ScenarioError,
   startRun,
   TraceBlock,
   type TraceColumn,
 } from '#sim-core/index';
+import {setValues} from './simulate/set-values';
+import {UsageError} from './simulate/usage';
+import {measureRun} from './simulate/windows';
 
 /** Columns of the table between time and phase, each with its name there. */
 const COLUMNS: readonly (readonly [TraceColumn, string])[] = [
@@ -30,9 +36,6 @@ const USUAL_S = 0.01;
 const DIGITS = 9;
 const ROWS_AT_ONCE = 10_000;
 
-/** Wrong words on the command line or a file that cannot be used. */
-class UsageError extends Error {}
-
 /** How often a row is written, and how far the run goes. */
 interface Plan {
   readonly sampleS: number;
@@ -45,13 +48,15 @@ interface Plan {
 }
 
 function main(words: readonly string[]): number {
-  const {file, everyS, out, events, hash} = readWords(words);
+  const {file, everyS, out, events, measures, set, hash} = readWords(words);
   const document = readDocument(file);
+  setValues(document, set);
   const run = startRun(document);
   const plan = planOf(run, document as {readonly durationS: number}, everyS);
   const target = out === undefined ? 1 : openFile(out);
   const print = writeRows(run, plan, target);
   if (events !== undefined) writeFile(events, eventsWithin(run, plan));
+  if (measures !== undefined) writeFile(measures, measuresOfWhole(document as Scenario, plan));
   if (hash) process.stderr.write(`${print}\n`);
   if (run.outcome.kind !== 'diverged') return 0;
   process.stderr.write(`simulate: the state diverged at ${run.outcome.atS} s\n`);
@@ -66,13 +71,15 @@ function readWords(words: readonly string[]) {
       every: {type: 'string'},
       out: {type: 'string'},
       events: {type: 'string'},
+      measures: {type: 'string'},
+      set: {type: 'string', multiple: true, default: []},
       hash: {type: 'boolean', default: false},
     },
   });
   const [file] = positionals;
   if (file === undefined || positionals.length !== 1)
     throw new UsageError(
-      'expected one scenario file: simulate FILE.json [--every 0.01] [--out FILE.csv]',
+      'expected one scenario file: simulate FILE.json [--set KEY=VALUE] [--every 0.01] [--out FILE.csv]',
     );
   const everyS = values.every === undefined ? undefined : Number(values.every);
   return {...values, file, everyS};
@@ -147,6 +154,13 @@ function eventsWithin(run: Run, {within, sampleS}: Plan): string {
     null,
     2,
   )}\n`;
+}
+
+/** Measures on every control tick: the run once more, its rows kept. */
+function measuresOfWhole(document: Scenario, {within}: Plan): string {
+  const block = new TraceBlock(within);
+  startRun(document).advance(within, block);
+  return `${JSON.stringify(measureRun(document, block), null, 2)}\n`;
 }
 
 function openFile(file: string): number {
