@@ -1,156 +1,114 @@
-// npm run -s bench:engine [-- --json | --check]: the engine against plain.c, both checked first. Figures, no test.
-import {execFileSync} from 'node:child_process';
-import fs from 'node:fs';
-import os from 'node:os';
-import path from 'node:path';
+// npm run -s bench:engine [-- --check] [--json] [--minify] [--rounds 5]
+// Measures the engine against a plain C program of the same model. Both must first meet the reference tables;
+// --check does only that. --minify bundles the engine as the browser gets it. Ends with 1 when a side misses the
+// tables, before anything is timed; with 2 and one line on wrong words.
 import {parseArgs} from 'node:util';
-import {answeredCases, longRun, timedCases} from './cases';
-import {bundleEngine, coldTimes, type Engine, engineRows, engineTime, loadEngine} from './engine';
-import {mapTime, SIDE} from './map';
-import {hourOfRows} from './memory';
-import {compilePlain, plainRows, plainTimes} from './plain';
+import {type Case, MAP_RUN, ONE_HOUR, referenceCases, TWENTY_MINUTES} from './cases';
+import {type Accuracy, accuracyOf} from './check';
+import {coldTimes} from './cold';
+import {type MapResult, type MemoryResult} from './jobs';
+import {machine} from './machine';
+import {Programs} from './programs';
+import {accuracyText, type Report, reportText} from './report';
+import {warmTimes} from './warm';
 
-/** Allowed difference in tension, as a share of range. */
-const TOLERANCE = 2e-4;
+const ROUNDS = 5;
 
-/** Times each side runs a case; the two take turns. */
-const ROUNDS = 7;
+/** Wrong words on the command line. */
+class UsageError extends Error {}
 
-const {values} = parseArgs({
-  options: {json: {type: 'boolean', default: false}, check: {type: 'boolean', default: false}},
-});
-const folder = fs.mkdtempSync(path.join(os.tmpdir(), 'evenspan-bench-'));
-try {
-  const program = compilePlain(folder);
-  const file = await bundleEngine(folder);
-  const engine = await loadEngine(file);
-  const worst = check(program, engine);
-  if (values.check) print('worst difference in tension, % of range', worst);
-  else await measure(program, engine, file, worst);
-} finally {
-  fs.rmSync(folder, {recursive: true, force: true});
+interface Wishes {
+  readonly check: boolean;
+  readonly json: boolean;
+  readonly minify: boolean;
+  readonly rounds: number;
 }
 
-type Table = readonly Readonly<Record<string, string | number>>[];
-
-/** Both sides on every reference case; throws when one misses the tolerance: their times would say nothing. */
-function check(program: string, engine: Engine): Table {
-  return answeredCases().map(({name, document, rows, rangeN}) => {
-    const apart = (found: readonly (readonly [number, number])[]): number => {
-      const byTime = new Map(found.map(([t, tension]) => [t.toFixed(1), tension]));
-      const gaps = rows.map(([t, tension]) =>
-        Math.abs((byTime.get(t.toFixed(1)) ?? NaN) - tension),
-      );
-      const share = Math.max(...gaps) / rangeN;
-      if (!(share <= TOLERANCE)) throw new Error(`${name} misses the tolerance: ${share}`);
-      return Number((100 * share).toPrecision(2));
-    };
-    return {
-      case: name,
-      engine: apart(engineRows(engine, document)),
-      'plain C': apart(plainRows(program, document)),
-    };
+function readWishes(): Wishes {
+  const {values} = parseArgs({
+    options: {
+      check: {type: 'boolean', default: false},
+      json: {type: 'boolean', default: false},
+      minify: {type: 'boolean', default: false},
+      rounds: {type: 'string', default: `${ROUNDS}`},
+    },
   });
+  const rounds = Number(values.rounds);
+  if (!(rounds >= 1 && rounds % 1 === 0))
+    throw new UsageError(`--rounds: ${values.rounds}, allowed: a whole number from 1`);
+  return {...values, rounds};
 }
 
-async function measure(program: string, engine: Engine, file: string, worst: Table): Promise<void> {
-  const warm = [false, true].flatMap((keep) =>
-    timedCases().map(({name, document}) => {
-      const [ours, plain]: [number[], number[]] = [[], []];
-      for (let round = 0; round < ROUNDS; round++) {
-        ours.push(engineTime(engine, document, keep));
-        plain.push(...plainTimes(program, document, 1, keep ? 'keep' : 'time'));
-      }
-      return compared(keep ? `${name}, rows kept` : name, document.durationS, ours, plain);
-    }),
-  );
-  const cold = [60, 1200].map((durationS) => {
-    const document = {...longRun(), durationS};
-    const ours = Array.from({length: ROUNDS}, () => coldTimes(file, document));
-    const plain = plainTimes(program, document, 1);
-    const whole = wholeTime(program, document);
-    return {
-      run: `${durationS} s`,
-      'first run, engine ms': ms(median(ours.map(({run}) => run))),
-      'first run, C ms': ms(median(plain)),
-      'process, engine ms': ms(median(ours.map((each) => each.whole))),
-      'process, C ms': ms(whole),
-      'ratio of processes': round(median(ours.map((each) => each.whole)) / whole),
-    };
-  });
-  const runs = SIDE * SIDE;
-  const map = [];
-  for (const workers of [1, 2]) {
-    const seconds = await mapTime(file, workers);
-    map.push({map: `${runs} runs of 60 s`, workers, seconds: round(seconds)});
+async function main({check, json, minify, rounds}: Wishes): Promise<number> {
+  const where = machine();
+  const references = referenceCases();
+  const programs = await Programs.make(minify);
+  try {
+    const all = [...references.values(), TWENTY_MINUTES, MAP_RUN];
+    const accuracy = all.map((each) => accuracyOf(programs, each));
+    const isRight = accuracy.every((each) => each.isRight);
+    if (check || !isRight) {
+      say(json ? {accuracy} : accuracyText(accuracy));
+      if (!isRight) process.stderr.write('bench:engine: a side is wrong; nothing was timed\n');
+      return isRight ? 0 : 1;
+    }
+    const report = {machine: where, minify, ...measure(programs, references, accuracy, rounds)};
+    say(json ? report : reportText(report));
+    return 0;
+  } finally {
+    programs.remove();
   }
-  const {rowsMb, grownMb} = hourOfRows(engine, longRun());
-  const memory = [
-    {'an hour, 360 000 rows': 'MB', rows: round(rowsMb), 'all growth': round(grownMb)},
-  ];
-  const result = {machine: machine(), worst, warm, cold, map, memory};
-  if (values.json) console.log(JSON.stringify(result));
-  else for (const [title, table] of Object.entries(result)) print(title, table);
 }
 
-function compared(name: string, durationS: number, ours: number[], plain: number[]) {
-  const [a, b] = [median(ours), median(plain)];
+function measure(
+  programs: Programs,
+  references: ReadonlyMap<string, Case>,
+  accuracy: readonly Accuracy[],
+  rounds: number,
+): Omit<Report, 'machine' | 'minify'> {
+  const of = (letter: string): Case => references.get(letter)!;
+  const quiet = of('a');
+  const others = [of('c'), of('d'), of('g')];
+  const stands = [quiet, of('c'), TWENTY_MINUTES, of('d')];
   return {
-    case: name,
-    'engine µs/s': round((1e6 * a) / durationS),
-    'C µs/s': round((1e6 * b) / durationS),
-    ratio: round(a / b),
-    'engine spread': spread(ours),
-    'C spread': spread(plain),
+    accuracy,
+    warm: [
+      ...stands.map((each) => warmTimes(programs, each, {rounds, keep: false})),
+      warmTimes(programs, quiet, {rounds, keep: false, before: others}),
+      ...stands.map((each) => warmTimes(programs, each, {rounds, keep: true})),
+    ],
+    cold: [
+      ...[quiet, of('c'), of('d')].map((each) => coldTimes(programs, each, 60)),
+      coldTimes(programs, TWENTY_MINUTES, 1200),
+    ],
+    map: [1, 2].map((workers) => ({workers, result: mapResult(programs, workers)})),
+    memory: memoryResult(programs),
   };
 }
 
-function wholeTime(program: string, document: ReturnType<typeof longRun>): number {
-  return median(
-    Array.from({length: ROUNDS}, () => {
-      const from = process.hrtime.bigint();
-      plainTimes(program, document, 1);
-      return Number(process.hrtime.bigint() - from) / 1e9;
-    }),
-  );
+function mapResult(programs: Programs, workers: number): MapResult {
+  const file = `${programs.place(MAP_RUN)}.json`;
+  return JSON.parse(programs.engine({kind: 'map', file, workers}).output) as MapResult;
 }
 
-function machine(): Table {
-  const gcc = execFileSync('gcc', ['-dumpfullversion'], {encoding: 'utf8'}).trim();
-  return [
-    {
-      cores: os.cpus().length,
-      processor: os.cpus()[0]?.model ?? '',
-      'memory GB': Math.round(os.totalmem() / 2 ** 30),
-      node: process.version,
-      gcc,
-    },
-  ];
+function memoryResult(programs: Programs): MemoryResult {
+  const file = `${programs.place(ONE_HOUR)}.json`;
+  const {output} = programs.engine({kind: 'memory', file}, ['--expose-gc']);
+  return JSON.parse(output) as MemoryResult;
 }
 
-function median(numbers: readonly number[]): number {
-  const sorted = [...numbers].sort((a, b) => a - b);
-  return sorted[Math.floor(sorted.length / 2)] ?? NaN;
+function say(what: string | object): void {
+  process.stdout.write(typeof what === 'string' ? what : `${JSON.stringify(what)}\n`);
 }
 
-function spread(numbers: readonly number[]): string {
-  return `${Math.round((100 * (Math.max(...numbers) - Math.min(...numbers))) / median(numbers))} %`;
-}
-
-function ms(seconds: number): number {
-  return round(1000 * seconds);
-}
-
-function round(value: number): number {
-  return Number(value.toPrecision(3));
-}
-
-function print(title: string, table: Table): void {
-  const [first = {}] = table;
-  const heads = Object.keys(first);
-  const cells = [heads, ...table.map((row) => heads.map((head) => String(row[head])))];
-  const widths = heads.map((_, place) => Math.max(...cells.map((row) => row[place]!.length)));
-  console.log(`\n${title}`);
-  for (const row of cells)
-    console.log(row.map((cell, place) => cell.padEnd(widths[place]!)).join('  '));
+// Ctrl-C ends the program that is just running; its failure then ends this one, the folder removed
+process.once('SIGINT', () => undefined);
+try {
+  process.exitCode = await main(readWishes());
+} catch (error) {
+  // what a caller can put right; anything else is our bug and is shown whole
+  const code = (error as NodeJS.ErrnoException).code ?? '';
+  if (!(error instanceof UsageError) && !code.startsWith('ERR_PARSE_ARGS')) throw error;
+  process.stderr.write(`bench:engine: ${(error as Error).message}\n`);
+  process.exitCode = 2;
 }
