@@ -14,8 +14,11 @@ export interface Grid {
   readonly stepsPerTick: number;
 }
 
-/** What vibrates or turns does so by this much in a step at most [rad], for its phase to stay right. */
-const FINE = 0.12;
+/**
+ * What vibrates or turns does so by this much in a step at most [rad], for its phase to stay right. A dancer on its
+ * web vibrates quickly and not for long.
+ */
+const FINE = {loadCell: 0.12, dancer: 0.2};
 
 /** A step is this share of a lag at most. */
 const LAG_SHARE = 0.4;
@@ -69,7 +72,7 @@ export class Stand {
     const filterS = sensing.kind === 'loadCell' ? sensing.filterS : 0;
     this.stepsPerS[0] = Math.max(
       pace.rate,
-      pace.vibration / FINE,
+      pace.vibration / FINE[sensing.kind],
       ...lagsOf(this.scenario.brake).map((lagS) => (lagS > 0 ? 1 / (LAG_SHARE * lagS) : 0)),
       filterS > 0 ? 1 / (LAG_SHARE * filterS) : 0,
     );
@@ -86,7 +89,7 @@ export class Stand {
     if (n[now.OUT_OF_ROUND] === 1) turning = 2 * Math.abs(state[at.OMEGA]!);
     if (equations.hasRunout) turning = Math.max(turning, Math.abs(n[now.C0]!) * n[now.PER_ROLLER]!);
     if (state[at.RIPPLE] !== 0) turning = Math.max(turning, TWO_PI * state[at.RIPPLE_HZ]!);
-    const asked = ceiling(grid.sampleS * Math.max(this.stepsPerS[0]!, turning / FINE));
+    const asked = ceiling(grid.sampleS * Math.max(this.stepsPerS[0]!, turning / FINE.loadCell));
     const least = ceiling(grid.stepsPerTick / MERGED);
     return Math.min(Math.max(asked, least), MOST_PARTS * grid.stepsPerTick);
   }

@@ -3,8 +3,14 @@ import {type Act} from '../run/log';
 import {lineFaults} from './cross-rules';
 import {type Fault, ScenarioError} from './faults';
 import {DISTURB_FIELDS, LINE_FIELDS, SET_FIELDS} from './fields';
-import {isObject, join, readKeys} from './read-field';
+import {isObject, join, readKeys, tableOf} from './read-field';
 import {type Disturbance, type LineCommand, type LiveSettings, type Scenario} from './scenario';
+
+const SET_TABLE = tableOf(SET_FIELDS.map(optional));
+const LINE_TABLE = tableOf(
+  LINE_FIELDS.map((field) => (field.onlyCommand === undefined ? field : optional(field))),
+);
+const DISTURB_TABLE = tableOf(DISTURB_FIELDS);
 
 /** Checks one change of settings by itself: unknown keys, wrong types, values out of range. */
 export function readSet(json: unknown): LiveSettings {
@@ -43,7 +49,7 @@ export function actFaults(at: string, json: unknown, scenario: Scenario): Fault[
 export function setFaults(at: string, json: unknown): Fault[] {
   if (!isObject(json) || Object.keys(json).length === 0)
     return [{path: at, value: json, allowed: 'an object with at least one controller key'}];
-  return readKeys(at, json, SET_FIELDS.map(optional), {nullTakesOff: true});
+  return readKeys(at, json, SET_TABLE, {nullTakesOff: true});
 }
 
 export function commandFaults(
@@ -52,16 +58,16 @@ export function commandFaults(
   alsoKnown: readonly string[] = [],
 ): Fault[] {
   if (!isObject(json)) return [{path: at, value: json, allowed: 'an object'}];
-  const fields = LINE_FIELDS.map((field) =>
-    field.onlyCommand === undefined ? field : optional(field),
-  );
-  return [...readKeys(at, json, fields, {nullTakesOff: false, alsoKnown}), ...lineFaults(at, json)];
+  return [
+    ...readKeys(at, json, LINE_TABLE, {nullTakesOff: false, alsoKnown}),
+    ...lineFaults(at, json),
+  ];
 }
 
 export function disturbFaults(at: string, json: unknown, scenario: Scenario): Fault[] {
   if (!isObject(json) || Object.keys(json).length === 0)
     return [{path: at, value: json, allowed: 'an object with at least one key of a disturbance'}];
-  const faults = readKeys(at, json, DISTURB_FIELDS, {nullTakesOff: true});
+  const faults = readKeys(at, json, DISTURB_TABLE, {nullTakesOff: true});
   for (const {path, onlyWith} of DISTURB_FIELDS)
     if (onlyWith !== undefined && onlyWith !== scenario.sensing.kind && json[path] !== undefined)
       faults.push({path: join(at, path), value: json[path], allowed: 'only with a load cell'});

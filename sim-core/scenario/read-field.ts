@@ -80,15 +80,21 @@ function pairsFit(allowed: PairBounds, points: readonly unknown[]): boolean {
   return allowed.to === undefined || last === allowed.to;
 }
 
+/** Fields by the last part of their path, made once for each table of keys. */
+export type FieldTable = ReadonlyMap<string, Field>;
+
+export function tableOf(fields: readonly Field[]): FieldTable {
+  return new Map(fields.map((field) => [keyOf(field), field]));
+}
+
 /** Checks the keys of one object: unknown, missing and wrong ones, each as a fault below `at`. */
 export function readKeys(
   at: string,
   json: JsonObject,
-  fields: readonly Field[],
+  byKey: FieldTable,
   rules: {readonly nullTakesOff: boolean; readonly alsoKnown?: readonly string[]},
 ): Fault[] {
   const faults: Fault[] = [];
-  const byKey = new Map(fields.map((field) => [keyOf(field), field]));
   for (const [key, value] of Object.entries(json)) {
     const field = byKey.get(key);
     if (field === undefined) {

@@ -2,12 +2,36 @@ import {GRACE_S, plantFaults, settingsFaults} from './cross-rules';
 import {type Fault, ScenarioError} from './faults';
 import {AT_FIELD, type Field, FIELDS, MOST_ENTRIES} from './fields';
 import {commandFaults, disturbFaults, setFaults, stiffnessFaults} from './read-act';
-import {allowedIn, fits, isObject, join, type JsonObject, keyOf, readKeys} from './read-field';
+import {
+  allowedIn,
+  type FieldTable,
+  fits,
+  isObject,
+  join,
+  type JsonObject,
+  keyOf,
+  readKeys,
+  tableOf,
+} from './read-field';
 import {type Scenario, SCENARIO_FORMAT, type ScenarioAction} from './scenario';
 import {changed, settingsOf} from './settings';
 
 const SECTIONS = ['web', 'roll', 'span', 'brake', 'sensing', 'controller'] as const;
-const TOP_FIELDS = FIELDS.filter(({path}) => !path.includes('.'));
+const TOP_TABLE = tableOf(FIELDS.filter(({path}) => !path.includes('.')));
+
+/** Tables of a section's keys: by kind of sensing, and for a document that has none. */
+const SECTION_TABLES: ReadonlyMap<string, FieldTable> = new Map(
+  SECTIONS.flatMap((section) =>
+    ['loadCell', 'dancer', 'none'].map((kind) => [
+      `${section} ${kind}`,
+      tableOf(
+        FIELDS.filter(
+          ({path, onlyWith = kind}) => path.startsWith(`${section}.`) && onlyWith === kind,
+        ),
+      ),
+    ]),
+  ),
+);
 
 /** Checks a document from outside, with every fault at once. The answer is the document itself. */
 export function readScenario(json: unknown): Scenario {
@@ -45,7 +69,7 @@ export function withDefaults(scenario: Scenario): Scenario {
 }
 
 function shapeFaults(json: JsonObject): Fault[] {
-  const faults = readKeys('', json, TOP_FIELDS, {
+  const faults = readKeys('', json, TOP_TABLE, {
     nullTakesOff: false,
     alsoKnown: ['format', 'line', 'actions', ...SECTIONS],
   });
@@ -59,10 +83,11 @@ function shapeFaults(json: JsonObject): Fault[] {
 
 function sectionFaults(section: string, value: unknown, json: JsonObject): Fault[] {
   if (!isObject(value)) return [{path: section, value, allowed: 'an object'}];
-  const fields = FIELDS.filter(
-    (field) => field.path.startsWith(`${section}.`) && belongs(field, json),
-  );
-  return readKeys(section, value, fields, {nullTakesOff: false});
+  const kind = isObject(json['sensing']) ? json['sensing']['kind'] : null;
+  const known = kind === 'loadCell' || kind === 'dancer' ? kind : 'none';
+  return readKeys(section, value, SECTION_TABLES.get(`${section} ${known}`)!, {
+    nullTakesOff: false,
+  });
 }
 
 /** Whether a field is one of this document's kind of sensing. */

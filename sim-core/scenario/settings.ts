@@ -46,16 +46,19 @@ export interface Settings {
   readonly outStepPct: number;
 }
 
-const DEFAULTS: ReadonlyMap<string, unknown> = new Map(
-  FIELDS.map(({path, default: value}) => [path, value]),
-);
+const DEFAULTS = Object.fromEntries(
+  CONTROLLER_KEYS.map((key) => [
+    key,
+    FIELDS.find(({path}) => path === `controller.${key}`)?.default ?? null,
+  ]),
+) as unknown as Settings;
 
 /** The settings a checked document starts with. */
 export function settingsOf(controller: ControllerParams): Settings {
   const given = controller as unknown as Readonly<Record<string, unknown>>;
-  return Object.fromEntries(
-    CONTROLLER_KEYS.map((key) => [key, given[key] ?? DEFAULTS.get(`controller.${key}`)]),
-  ) as unknown as Settings;
+  const settings = {...DEFAULTS} as unknown as Record<string, unknown>;
+  for (const key of CONTROLLER_KEYS) settings[key] = given[key] ?? settings[key];
+  return settings as unknown as Settings;
 }
 
 /** The settings after one `set`; null takes a key off. */
