@@ -8,7 +8,7 @@ export const BYTES: {
     a: '05e90652c75c43e3',
     b: 'e789336a1465308b',
     c: 'ac30c4d521053436',
-    d: '86985ffabf5d631b',
+    d: '04ef892aefd17993',
     e: '8c1c6fbdd4623dc1',
     f: 'e3bc34c664562746',
     g: '01759a6b1940ad29',

@@ -5,7 +5,7 @@ import {type Scenario} from '../scenario/scenario';
 import {decay} from '../signal/decay';
 
 /** Greatest turn in a step of whatever vibrates or turns [rad]; a dancer's quick vibration dies out sooner. */
-export const QUIET_RAD = {loadCell: 0.14, dancer: 0.2};
+export const QUIET_RAD = {loadCell: 0.14, dancer: 0.25};
 
 /** A step is this share of a lag, or of the time in which something decays, at most. */
 export const QUIET_SHARE = 0.5;
