@@ -61,7 +61,7 @@ export class QuietCell extends QuietPlant {
     let omega = p[at.OMEGA]!;
     let theta = p[at.THETA]!;
     let wound = p[at.WOUND]!;
-    let s = spanM / p[at.LENGTH]!; // 1 + strain
+    let stretch = spanM / p[at.LENGTH]!; // 1 + strain
     let sin = made[of.SINE]!;
     let cos = made[of.COSINE]!;
     const fine = made[of.FINE]! * table.ROW;
@@ -138,56 +138,56 @@ export class QuietCell extends QuietPlant {
           drag1 += (drag1 * extraGrip) / (1 + z * z);
         }
         const paid1 = omega * (r1 * perWound);
-        const slope1 = s * speed1 - s * s * perSpan * paid1;
-        const pull1 = stiffness * s - lost1 + lossNS * slope1;
+        const slope1 = stretch * speed1 - stretch * stretch * perSpan * paid1;
+        const pull1 = stiffness * stretch - lost1 + lossNS * slope1;
         const turn1 = perInertia * r1 * pull1 - (perInertia * (drag1 + coulomb) + slowed * omega);
 
         // stage 2
         const omega2 = omega + half * turn1;
-        const s2 = s + half * slope1;
+        const stretch2 = stretch + half * slope1;
         if (extraGrip > 0) {
           const z = omega2 * perGripSpeed;
           drag2 += (drag2 * extraGrip) / (1 + z * z);
         }
         const paid2 = omega2 * (r2 * perWound);
-        const slope2 = s2 * speed2 - s2 * s2 * perSpan * paid2;
-        const pull2 = stiffness * s2 - lost2 + lossNS * slope2;
+        const slope2 = stretch2 * speed2 - stretch2 * stretch2 * perSpan * paid2;
+        const pull2 = stiffness * stretch2 - lost2 + lossNS * slope2;
         const turn2 = perInertia * r2 * pull2 - (perInertia * (drag2 + coulomb) + slowed * omega2);
 
         // stage 3
         const omega3 = omega + half * turn2;
-        const s3 = s + half * slope2;
+        const stretch3 = stretch + half * slope2;
         if (extraGrip > 0) {
           const z = omega3 * perGripSpeed;
           drag3 += (drag3 * extraGrip) / (1 + z * z);
         }
         const r3 = r2 + bend2 * half * (omega2 - omega);
         const paid3 = omega3 * (r3 * perWound);
-        const slope3 = s3 * speed2 - s3 * s3 * perSpan * paid3;
-        const pull3 = stiffness * s3 - lost2 + lossNS * slope3;
+        const slope3 = stretch3 * speed2 - stretch3 * stretch3 * perSpan * paid3;
+        const pull3 = stiffness * stretch3 - lost2 + lossNS * slope3;
         const turn3 = perInertia * r3 * pull3 - (perInertia * (drag3 + coulomb) + slowed * omega3);
 
         // stage 4
         const omega4 = omega + stepS * turn3;
-        const s4 = s + stepS * slope3;
+        const stretch4 = stretch + stepS * slope3;
         if (extraGrip > 0) {
           const z = omega4 * perGripSpeed;
           drag4 += (drag4 * extraGrip) / (1 + z * z);
         }
         r4 += bend4 * stepS * (omega3 - omega);
         const paid4 = omega4 * (r4 * perWound);
-        const slope4 = s4 * speed4 - s4 * s4 * perSpan * paid4;
-        const pull4 = stiffness * s4 - lost4 + lossNS * slope4;
+        const slope4 = stretch4 * speed4 - stretch4 * stretch4 * perSpan * paid4;
+        const pull4 = stiffness * stretch4 - lost4 + lossNS * slope4;
         const turn4 = perInertia * r4 * pull4 - (perInertia * (drag4 + coulomb) + slowed * omega4);
 
         const turned = sixth * (omega + 2 * (omega2 + omega3) + omega4);
         const power = (drag1 * omega + 2 * (drag2 * omega2 + drag3 * omega3) + drag4 * omega4) / 6;
         omega += sixth * (turn1 + 2 * (turn2 + turn3) + turn4);
-        s += sixth * (slope1 + 2 * (slope2 + slope3) + slope4);
+        stretch += sixth * (slope1 + 2 * (slope2 + slope3) + slope4);
         if (
           !(pull1 > floorN && pull2 > floorN && pull3 > floorN && pull4 > floorN) ||
           !(pull1 < ceilingN && pull2 < ceilingN && pull3 < ceilingN && pull4 < ceilingN) ||
-          !(omega > 0 && s > 1) ||
+          !(omega > 0 && stretch > 1) ||
           (leavesPiece && curve.piece(xEnd) !== piece)
         ) {
           return false;
@@ -224,18 +224,18 @@ export class QuietCell extends QuietPlant {
     let radius = radius0 + radiusSlope * sampleS;
     if (isOut) radius += eccentricity * cos + oval * (2 * cos * cos - 1);
     const nipEnd = c0 + sampleS * (c1 + sampleS * c2);
-    const slope = (s * nipEnd - s * s * omega * (radius * perWound)) * perSpan;
-    const tension = stiffness * (s - 1) + lossNS * slope;
+    const slope = (stretch * nipEnd - stretch * stretch * omega * (radius * perWound)) * perSpan;
+    const tension = stiffness * (stretch - 1) + lossNS * slope;
     if (!(tension > 0 && tension < breakN)) return false;
     p[at.OMEGA] = omega;
     p[at.THETA] = withinTurn(theta); // asked each time: a way first taken late makes the loop compile anew
     p[at.WOUND] = wound;
-    p[at.LENGTH] = spanM / s;
+    p[at.LENGTH] = spanM / stretch;
     p[at.HEAT] = heat;
     p[at.FILTER] = filter;
     p[at.DRIVE] = x;
     p[at.TENSION] = tension;
-    p[at.STRAIN] = s - 1;
+    p[at.STRAIN] = stretch - 1;
     return true;
   }
 }

@@ -63,7 +63,7 @@ export class QuietDancer extends QuietPlant {
     let wound = p[at.WOUND]!;
     let dancer = p[at.DANCER]!;
     let dancerSpeed = p[at.DANCER_SPEED]!;
-    let s = (spanM + 2 * dancer) / p[at.LENGTH]!; // 1 + strain
+    let stretch = (spanM + 2 * dancer) / p[at.LENGTH]!; // 1 + strain
     let sin = made[of.SINE]!;
     let cos = made[of.COSINE]!;
     const fine = made[of.FINE]! * table.ROW;
@@ -136,15 +136,16 @@ export class QuietDancer extends QuietPlant {
         }
         const paid1 = omega * (r1 * perWound);
         let perPath = 1 / (spanM + 2 * dancer);
-        const slope1 = s * perPath * (v1 + 2 * dancerSpeed) - s * s * perPath * paid1;
-        const pull1 = stiffness * s - lost1 + lossNS * slope1;
+        const slope1 =
+          stretch * perPath * (v1 + 2 * dancerSpeed) - stretch * stretch * perPath * paid1;
+        const pull1 = stiffness * stretch - lost1 + lossNS * slope1;
         const turn1 = perInertia * r1 * pull1 - (perInertia * (drag1 + coulomb) + slowed * omega);
         const push1 =
           perMass * (2 * (loadingN - (pull1 + (lost1 - stiffness))) - damping * dancerSpeed);
 
         // stage 2
         const omega2 = omega + half * turn1;
-        const s2 = s + half * slope1;
+        const stretch2 = stretch + half * slope1;
         if (extraGrip > 0) {
           const z = omega2 * perGripSpeed;
           drag2 += (drag2 * extraGrip) / (1 + z * z);
@@ -152,15 +153,16 @@ export class QuietDancer extends QuietPlant {
         const paid2 = omega2 * (r2 * perWound);
         const dancerSpeed2 = dancerSpeed + half * push1;
         perPath = 1 / (spanM + 2 * (dancer + half * dancerSpeed));
-        const slope2 = s2 * perPath * (v2 + 2 * dancerSpeed2) - s2 * s2 * perPath * paid2;
-        const pull2 = stiffness * s2 - lost2 + lossNS * slope2;
+        const slope2 =
+          stretch2 * perPath * (v2 + 2 * dancerSpeed2) - stretch2 * stretch2 * perPath * paid2;
+        const pull2 = stiffness * stretch2 - lost2 + lossNS * slope2;
         const turn2 = perInertia * r2 * pull2 - (perInertia * (drag2 + coulomb) + slowed * omega2);
         const push2 =
           perMass * (2 * (loadingN - (pull2 + (lost2 - stiffness))) - damping * dancerSpeed2);
 
         // stage 3
         const omega3 = omega + half * turn2;
-        const s3 = s + half * slope2;
+        const stretch3 = stretch + half * slope2;
         if (extraGrip > 0) {
           const z = omega3 * perGripSpeed;
           drag3 += (drag3 * extraGrip) / (1 + z * z);
@@ -169,15 +171,16 @@ export class QuietDancer extends QuietPlant {
         const paid3 = omega3 * (r3 * perWound);
         const dancerSpeed3 = dancerSpeed + half * push2;
         perPath = 1 / (spanM + 2 * (dancer + half * dancerSpeed2));
-        const slope3 = s3 * perPath * (v2 + 2 * dancerSpeed3) - s3 * s3 * perPath * paid3;
-        const pull3 = stiffness * s3 - lost2 + lossNS * slope3;
+        const slope3 =
+          stretch3 * perPath * (v2 + 2 * dancerSpeed3) - stretch3 * stretch3 * perPath * paid3;
+        const pull3 = stiffness * stretch3 - lost2 + lossNS * slope3;
         const turn3 = perInertia * r3 * pull3 - (perInertia * (drag3 + coulomb) + slowed * omega3);
         const push3 =
           perMass * (2 * (loadingN - (pull3 + (lost2 - stiffness))) - damping * dancerSpeed3);
 
         // stage 4
         const omega4 = omega + stepS * turn3;
-        const s4 = s + stepS * slope3;
+        const stretch4 = stretch + stepS * slope3;
         if (extraGrip > 0) {
           const z = omega4 * perGripSpeed;
           drag4 += (drag4 * extraGrip) / (1 + z * z);
@@ -186,8 +189,9 @@ export class QuietDancer extends QuietPlant {
         const paid4 = omega4 * (r4 * perWound);
         const dancerSpeed4 = dancerSpeed + stepS * push3;
         perPath = 1 / (spanM + 2 * (dancer + stepS * dancerSpeed3));
-        const slope4 = s4 * perPath * (v4 + 2 * dancerSpeed4) - s4 * s4 * perPath * paid4;
-        const pull4 = stiffness * s4 - lost4 + lossNS * slope4;
+        const slope4 =
+          stretch4 * perPath * (v4 + 2 * dancerSpeed4) - stretch4 * stretch4 * perPath * paid4;
+        const pull4 = stiffness * stretch4 - lost4 + lossNS * slope4;
         const turn4 = perInertia * r4 * pull4 - (perInertia * (drag4 + coulomb) + slowed * omega4);
         const push4 =
           perMass * (2 * (loadingN - (pull4 + (lost4 - stiffness))) - damping * dancerSpeed4);
@@ -195,14 +199,14 @@ export class QuietDancer extends QuietPlant {
         const turned = sixth * (omega + 2 * (omega2 + omega3) + omega4);
         const power = (drag1 * omega + 2 * (drag2 * omega2 + drag3 * omega3) + drag4 * omega4) / 6;
         omega += sixth * (turn1 + 2 * (turn2 + turn3) + turn4);
-        s += sixth * (slope1 + 2 * (slope2 + slope3) + slope4);
+        stretch += sixth * (slope1 + 2 * (slope2 + slope3) + slope4);
         dancer += sixth * (dancerSpeed + 2 * (dancerSpeed2 + dancerSpeed3) + dancerSpeed4);
         dancerSpeed += sixth * (push1 + 2 * (push2 + push3) + push4);
         if (!(dancer > 0 && dancer < travelM)) return false;
         if (
           !(pull1 > floorN && pull2 > floorN && pull3 > floorN && pull4 > floorN) ||
           !(pull1 < ceilingN && pull2 < ceilingN && pull3 < ceilingN && pull4 < ceilingN) ||
-          !(omega > 0 && s > 1) ||
+          !(omega > 0 && stretch > 1) ||
           (leavesPiece && curve.piece(xEnd) !== piece)
         ) {
           return false;
@@ -234,19 +238,19 @@ export class QuietDancer extends QuietPlant {
     if (isOut) radius += eccentricity * cos + oval * (2 * cos * cos - 1);
     const path = spanM + 2 * dancer;
     const nipEnd = c0 + sampleS * (c1 + sampleS * c2) + 2 * dancerSpeed;
-    const slope = (s * nipEnd - s * s * omega * (radius * perWound)) / path;
-    const tension = stiffness * (s - 1) + lossNS * slope;
+    const slope = (stretch * nipEnd - stretch * stretch * omega * (radius * perWound)) / path;
+    const tension = stiffness * (stretch - 1) + lossNS * slope;
     if (!(tension > 0 && tension < breakN)) return false;
     p[at.OMEGA] = omega;
     p[at.THETA] = withinTurn(theta); // asked each time: a way first taken late makes the loop compile anew
     p[at.WOUND] = wound;
-    p[at.LENGTH] = path / s;
+    p[at.LENGTH] = path / stretch;
     p[at.DANCER] = dancer;
     p[at.DANCER_SPEED] = dancerSpeed;
     p[at.HEAT] = heat;
     p[at.DRIVE] = x;
     p[at.TENSION] = tension;
-    p[at.STRAIN] = s - 1;
+    p[at.STRAIN] = stretch - 1;
     return true;
   }
 }
