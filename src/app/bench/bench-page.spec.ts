@@ -3,7 +3,7 @@ import {signal} from '@angular/core';
 import {Session} from '../session/session';
 import {BenchPage} from './bench-page';
 import {KeptHere, type KeptRun} from './kept-here';
-import {COATER_1} from './set-ups';
+import {COATER_1} from './set-ups/coater-1';
 
 describe('BenchPage', () => {
   let fixture: ComponentFixture<BenchPage>;
@@ -51,6 +51,25 @@ describe('BenchPage', () => {
 
     expect(host().textContent).toContain('120 m/min');
     expect(host().textContent).toContain('Turn the gain up');
+  });
+
+  it('takes another stand from the library, and keeps the run before to come back to', async () => {
+    await open();
+    document.dispatchEvent(new KeyboardEvent('keydown', {key: 's'}));
+    await until(() => button('Change speed') !== undefined);
+    const select = host().querySelector('select')!;
+    select.value = 'foil-coater';
+    select.dispatchEvent(new Event('change'));
+    await until(() => host().querySelector('h1')?.textContent === 'Foil coater');
+    await until(() => button('Back to the run before') !== undefined);
+
+    expect(host().textContent).toContain('9 µm aluminium foil');
+    expect(kept?.setUp).toBe('foil-coater');
+
+    button('Back to the run before')!.click();
+    await until(() => host().querySelector('h1')?.textContent === 'Coater 1, unwind');
+
+    expect(select.value).toBe('coater-1');
   });
 
   it('starts by the key S with what stands in the fields, and pauses by P', async () => {

@@ -25,7 +25,8 @@ import {Session} from '../session/session';
 import {type BenchKey, BenchKeys} from './bench-keys';
 import {BenchStore} from './bench-store';
 import {FirstSteps} from './first-steps';
-import {type RollSize} from './set-ups';
+import {SET_UPS} from './set-ups/library';
+import {type RollSize} from './set-ups/stand';
 
 const KEEP_EVERY_MS = 2000;
 const SIZES: readonly {readonly key: RollSize; readonly name: string}[] = [
@@ -71,6 +72,12 @@ export class BenchPage implements OnInit {
   protected readonly showsTruth = signal(false);
   private readonly linePanel = viewChild(LinePanel);
   protected readonly sizes = SIZES;
+  protected readonly setUps = SET_UPS;
+  /** What the fields of the line begin with on this stand. */
+  protected readonly firstOnLine = computed(() => {
+    const {speedMps, rampS, stopS, firstStopS = stopS} = this.store.setUp().job;
+    return {speedMps, startS: rampS, stopS: firstStopS, fastStopS: 0.6 * firstStopS};
+  });
   protected readonly setPointN = computed(
     () => (this.run.settings()['setPointN'] ?? 200) as number,
   );

@@ -1,7 +1,8 @@
 import {TestBed} from '@angular/core/testing';
 import {BenchStore} from './bench-store';
 import {KeptHere, type KeptRun} from './kept-here';
-import {COATER_1, withRadius} from './set-ups';
+import {COATER_1} from './set-ups/coater-1';
+import {withRadius} from './set-ups/stand';
 
 class KeptInMemory {
   kept: KeptRun | null = null;

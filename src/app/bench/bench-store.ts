@@ -8,7 +8,8 @@ import {
 } from '#sim-core/index';
 import {LiveRun} from '../live-run/live-run';
 import {KeptHere, type KeptRun} from './kept-here';
-import {COATER_1, type RollSize, withRadius} from './set-ups';
+import {SET_UPS, setUpOf} from './set-ups/library';
+import {type RollSize, type SetUp, withRadius} from './set-ups/stand';
 
 /** The free Bench: one run at a time, kept on this device until the next one; the one before can be had back. */
 @Injectable()
@@ -17,10 +18,11 @@ export class BenchStore {
   readonly run: LiveRun = new LiveRun((entry) => this.keep([...this.run.entries(), entry]));
 
   private readonly size = signal<RollSize>('half');
-  readonly setUp = signal(COATER_1).asReadonly();
+  private readonly chosen = signal<SetUp>(SET_UPS[0]!);
+  readonly setUp = this.chosen.asReadonly();
   readonly rollSize = this.size.asReadonly();
   /** What this run started with. */
-  private readonly startedWith = signal<Scenario>(COATER_1.scenario);
+  private readonly startedWith = signal<Scenario>(SET_UPS[0]!.scenario);
   private readonly before = signal<KeptRun | null>(null);
   private readonly isTakenUp = signal(false);
   /** Runs that tests ask for are not kept: they would push out a person's own. */
@@ -97,6 +99,13 @@ export class BenchStore {
     return this.begin(withRadius(this.withSettingsNow(), this.setUp().radii[size]), size);
   }
 
+  /** Another stand from the library, as it was delivered; the run so far can be had back. */
+  async chooseSetUp(key: string): Promise<void> {
+    const setUp = setUpOf(key);
+    if (setUp === this.setUp()) return;
+    await this.begin(setUp.scenario, 'half', setUp);
+  }
+
   /** Takes the run before this one up again, where it was left. */
   async goBack(): Promise<void> {
     const before = this.before();
@@ -110,17 +119,24 @@ export class BenchStore {
     if (this.isReady()) void this.keep(this.run.entries());
   }
 
-  private async begin(document: Scenario, size = this.size()): Promise<void> {
-    const entries = this.run.entries();
-    if (this.isReady() && entries.length > 0) this.before.set(this.runSoFar(entries));
+  private async begin(document: Scenario, size = this.size(), setUp = this.setUp()): Promise<void> {
+    this.setAside();
+    this.chosen.set(setUp);
     this.startedWith.set(document);
     this.size.set(size);
     this.isTakenUp.set(false);
     if (await this.run.start({document})) await this.keep([]);
   }
 
+  /** Keeps the run so far to come back to, when anything was done in it. */
+  private setAside(): void {
+    const entries = this.run.entries();
+    if (this.isReady() && entries.length > 0) this.before.set(this.runSoFar(entries));
+  }
+
   private async takeUp(kept: KeptRun): Promise<boolean> {
     if (!(await this.run.start(kept))) return false;
+    this.chosen.set(setUpOf(kept.setUp));
     this.startedWith.set(kept.document);
     this.size.set(kept.rollSize);
     this.isTakenUp.set(true);
@@ -150,6 +166,7 @@ export class BenchStore {
       entries,
       throughTick: this.run.view?.tick ?? 0,
       rollSize: this.size(),
+      setUp: this.setUp().key,
     };
   }
 

@@ -1,7 +1,7 @@
 import {inject, Injectable} from '@angular/core';
 import {type LogEntry, type Scenario} from '#sim-core/index';
 import {Session} from '../session/session';
-import {type RollSize} from './set-ups';
+import {type RollSize} from './set-ups/stand';
 
 /** A run of the free Bench as this device keeps it. */
 export interface KeptRun {
@@ -9,6 +9,8 @@ export interface KeptRun {
   readonly entries: readonly LogEntry[];
   readonly throughTick: number;
   readonly rollSize: RollSize;
+  /** Key of the set-up it began from; the first one for runs kept before there were several. */
+  readonly setUp?: string;
 }
 
 /** Keeps the run of the free Bench on this device, one a person: a reload goes on where it was. */

@@ -1,16 +1,5 @@
-import {type Scenario, SCENARIO_FORMAT} from '#sim-core/index';
-
-/** A stand to begin with. */
-export interface SetUp {
-  readonly key: string;
-  readonly title: string;
-  readonly summary: string;
-  /** Roll radii behind the presses [m]. */
-  readonly radii: {readonly small: number; readonly half: number; readonly full: number};
-  readonly scenario: Scenario;
-}
-
-export type RollSize = keyof SetUp['radii'];
+import {SCENARIO_FORMAT} from '#sim-core/index';
+import {type SetUp} from './stand';
 
 /**
  * An invented paper coater with a half roll. Data: common practice, no source. It starts at its own equilibrium:
@@ -22,7 +11,9 @@ export const COATER_1: SetUp = {
   key: 'coater-1',
   title: 'Coater 1, unwind',
   summary: '100 µm paper, 1.0 m wide, air brake, load cell',
+  source: 'Common practice, no source; the same stand as the exercises on paper.',
   radii: {small: 0.1, half: 0.25, full: 0.5},
+  job: {speedMps: 2, rampS: 10, stopS: 8, firstStopS: 4},
   scenario: {
     format: SCENARIO_FORMAT,
     name: 'Coater 1',
@@ -71,16 +62,3 @@ export const COATER_1: SetUp = {
     actions: [],
   },
 };
-
-/** The stand with a roll of another radius, its holding brake set so that it can hold the job's tension at rest. */
-export function withRadius(scenario: Scenario, radiusM: number): Scenario {
-  const {brake, controller} = scenario;
-  const residualNm = brake.residualTorqueNm ?? 0;
-  const share = (controller.setPointN * radiusM - residualNm) / (brake.maxTorqueNm - residualNm);
-  const standstillPct = Math.min(100, Math.max(0, Math.ceil(100 * share)));
-  return {
-    ...scenario,
-    roll: {...scenario.roll, radiusM},
-    controller: {...controller, standstillPct},
-  };
-}
