@@ -25,7 +25,7 @@ import {Session} from '../session/session';
 import {type BenchKey, BenchKeys} from './bench-keys';
 import {BenchStore} from './bench-store';
 import {FirstSteps} from './first-steps';
-import {SET_UPS} from './set-ups/library';
+import {OFFERED} from './set-ups/library';
 import {type RollSize} from './set-ups/stand';
 
 const KEEP_EVERY_MS = 2000;
@@ -72,7 +72,7 @@ export class BenchPage implements OnInit {
   protected readonly showsTruth = signal(false);
   private readonly linePanel = viewChild(LinePanel);
   protected readonly sizes = SIZES;
-  protected readonly setUps = SET_UPS;
+  protected readonly setUps = OFFERED;
   /** What the fields of the line begin with on this stand. */
   protected readonly firstOnLine = computed(() => {
     const {speedMps, rampS, stopS, firstStopS = stopS} = this.store.setUp().job;

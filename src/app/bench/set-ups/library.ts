@@ -24,6 +24,9 @@ export const SET_UPS: readonly SetUp[] = [
   TISSUE_CONVERTER,
 ];
 
+/** Those that the Bench offers: its picture and its trend do not show a dancer yet. */
+export const OFFERED = SET_UPS.filter(({scenario}) => scenario.sensing.kind === 'loadCell');
+
 /** The set-up of this key, or the first for a key that no longer exists. */
 export function setUpOf(key: string | undefined): SetUp {
   return SET_UPS.find((each) => each.key === key) ?? COATER_1;
