@@ -8,7 +8,8 @@ module.exports = (config) => {
       require('karma-chrome-launcher'),
       require('karma-coverage'),
     ],
-    client: {jasmine: {random: true}, clearContext: true},
+    // a busy machine is slow, not wrong: no spec fails for less than this [ms]
+    client: {jasmine: {random: true, timeoutInterval: 20_000}, clearContext: true},
     reporters: ['progress'],
     coverageReporter: {dir: 'coverage', reporters: [{type: 'text-summary'}, {type: 'html'}]},
     customLaunchers: {
