@@ -98,10 +98,13 @@ export function stiffnessFaults(
   const plantStepS = scenario.plantStepS ?? 0.001;
   const pace = paceOf(scenario, modulusPa, largestRadiusM);
   if (neededParts(plantStepS, pace) <= MOST_PARTS) return [];
+  const atStart = paceOf(scenario, modulusPa, scenario.roll.radiusM);
+  const isByRadius = neededParts(plantStepS, atStart) <= MOST_PARTS;
+  const [key, value] = isByRadius ? ['radiusM', largestRadiusM] : ['modulusPa', modulusPa];
   return [
     {
-      path: at === '' ? 'plantStepS' : join(at, 'modulusPa'),
-      value: at === '' ? plantStepS : modulusPa,
+      path: at === '' ? 'plantStepS' : join(at, key),
+      value: at === '' ? plantStepS : value,
       allowed: `a plant slower than ${Math.floor(MOST_PARTS / plantStepS)} 1/s (its fastest rate is ${Math.round(pace.rate)} 1/s): a softer or longer web, a heavier roll or dancer, or a shorter plantStepS`,
     },
   ];

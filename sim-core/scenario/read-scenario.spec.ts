@@ -341,3 +341,20 @@ describe('any document at all', () => {
     expect(ran).toBeGreaterThan(50);
   });
 });
+
+describe('a disturbance that makes the plant too quick', () => {
+  // a short, stiff span on a heavy core: half as quick again with a roll of 0.14 m on it
+  const quick = aScenario({
+    web: {modulusPa: 4.3e11, thicknessM: 2e-4},
+    span: {lengthM: 0.2},
+    roll: {coreRadiusM: 0.0762, radiusM: 0.0763, coreInertiaKgM2: 0.5},
+  });
+  const faulty = (disturb: object): string[] =>
+    scenarioFaults({...quick, actions: [{atS: 1, disturb}]}).map(({path}) => path);
+
+  it('is refused by the key that does it', () => {
+    expect(faulty({radiusM: 0.0764})).toEqual([]);
+    expect(faulty({radiusM: 0.14})).toEqual(['actions[0].disturb.radiusM']);
+    expect(faulty({modulusPa: 1e12})).toEqual(['actions[0].disturb.modulusPa']);
+  });
+});
